@@ -1,0 +1,42 @@
+// Package quantity holds values with units: it alone parses and prints them.
+// Inside the program every value is a plain float64 in its SI base unit; the
+// named types below say which. Temperatures are degrees Celsius.
+package quantity
+
+// Named SI values. The comment is the unit that the float holds.
+type (
+	Volts         float64 // V
+	Amps          float64 // A
+	Ohms          float64 // Ω
+	Farads        float64 // F
+	Henries       float64 // H
+	Hertz         float64 // Hz
+	Seconds       float64 // s
+	Watts         float64 // W
+	VoltAmps      float64 // VA
+	Joules        float64 // J
+	Coulombs      float64 // C
+	Celsius       float64 // °C
+	Kelvins       float64 // K, a temperature difference
+	KelvinPerWatt float64 // K/W
+	Meters        float64 // m
+	CubicMeters   float64 // m³
+	SquareMeters  float64 // m²
+	Ratio         float64 // 1; written and read in %
+	VoltPerSecond float64 // V/s
+)
+
+// Quantity is any of the named types above.
+type Quantity interface {
+	~float64
+	Dimension() Dimension
+	String() string
+}
+
+// Read parses text such as "4.7 nF", "4n7" (RKM code of IEC 60062) or
+// "10 %" into Q. The error says what was read and how to mend it, without
+// file or key, which the caller adds.
+func Read[Q Quantity](text string) (Q, error) {
+	v, err := Parse(text, Q(0).Dimension())
+	return Q(v), err
+}

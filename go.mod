@@ -1,0 +1,5 @@
+module rungwright
+
+go 1.26.0
+
+require github.com/shopspring/decimal v1.6.0
