@@ -1,12 +1,5 @@
 package ladder
 
-// Estimated is the charge-balance estimate: what a formula can say.
-type Estimated struct {
-	NoLoadV float64 // at no load, diode drops and stray factor included
-	MeanV   float64
-	RippleV float64 // peak to peak
-}
-
 // Steady is the periodic steady state of a circuit. Output values are
 // negative for a negative circuit (MeanV, MinV, MaxV); stresses are
 // magnitudes.
@@ -22,6 +15,9 @@ type Steady struct {
 	Periods           int           // how many were integrated
 	Note              string        // what is particular about the answer, such as a diode that never conducts
 	Waves             *Waves        // when asked for
+
+	start []float64 // the state at the start of the period, in the system's numbering
+	mesh  []float64 // the instants that the integrator used
 }
 
 // CapacitorState is one capacitor over the period.

@@ -1,0 +1,316 @@
+package ladder
+
+import (
+	"context"
+	"errors"
+	"fmt"
+	"math"
+
+	"gonum.org/v1/gonum/mat"
+)
+
+// Settings tunes a solve; the zero value is right.
+type Settings struct {
+	Tolerance float64 // local error relative to the source peak; zero: 1e-5
+	Waves     bool    // keep the waveforms
+	Start     *Steady // a neighbour's solution to start from; nil: the estimate
+}
+
+// NoSteadyError says that no periodic steady state was found, and why.
+type NoSteadyError struct{ Why string }
+
+func (e *NoSteadyError) Error() string { return "no steady state: " + e.Why }
+
+// Solve finds the periodic steady state: the state that one period of the
+// source returns to itself. It shoots (after Aprille and Trick, Proc. IEEE 60
+// (1972) 108, from memory): Newton on x(T) − x(0) = 0 with the sensitivity
+// carried through the integrator's own steps, on a mesh that is held fixed
+// once the answer is near. The error is that of Check, of the context, or a
+// *NoSteadyError.
+func Solve(ctx context.Context, c Circuit, set *Settings) (Steady, error) {
+	if bad := c.Check(); len(bad) > 0 {
+		return Steady{}, errors.Join(bad...)
+	}
+	if set == nil {
+		set = &Settings{}
+	}
+	sh := newShooter(c, set)
+	if err := sh.approach(ctx); err != nil {
+		return Steady{}, err
+	}
+	return sh.settle(ctx)
+}
+
+// Limits of the shooting.
+const (
+	maxRounds  = 120  // Newton rounds and plain periods together
+	nearEnough = 3e-3 // Newton step, in source peaks, below which the mesh is held
+	closed     = 2e-6 // Newton step, in source peaks, that ends the search
+	plainStart = 2    // periods run plainly before the first Newton step
+)
+
+// shooter is one solve.
+type shooter struct {
+	c     Circuit
+	set   *Settings
+	s     *system
+	r     *runner
+	x     []float64 // state at the start of the period
+	gap   []float64 // x(T) − x(0)
+	lu    mat.LU
+	ready bool // lu holds a usable I − Φ
+	delta []float64
+	round int
+}
+
+func newShooter(c Circuit, set *Settings) *shooter {
+	s := newSystem(c)
+	tolerance := set.Tolerance
+	if tolerance <= 0 {
+		tolerance = 1e-5
+	}
+	sh := &shooter{c: c, set: set, s: s, r: newRunner(s, tolerance),
+		gap: make([]float64, s.n), delta: make([]float64, s.n)}
+	sh.x = sh.guess()
+	return sh
+}
+
+// guess is a neighbour's state, or the charge balance.
+func (sh *shooter) guess() []float64 {
+	s := sh.s
+	x := make([]float64, s.n+1)
+	if n := sh.set.Start; n != nil && len(n.start) == s.n+1 {
+		copy(x, n.start)
+		return x
+	}
+	e := newEstimator(sh.c)
+	for i, v := range e.state(e.solve().LoadA) {
+		x[s.m.place[i]] = v
+	}
+	sh.fillInner(x)
+	return x
+}
+
+// fillInner sets the nodes inside capacitors and after a filter to the
+// voltage of the node beside them, where no current flows.
+func (sh *shooter) fillInner(x []float64) {
+	s := sh.s
+	for e := s.resistAt(); e < s.loadAt(); e++ {
+		x[s.b[e]] = x[s.a[e]]
+	}
+	x[s.n] = 0
+}
+
+// run integrates one period from sh.x and notes the gap. With fresh it
+// carries the sensitivity and factors I − Φ.
+func (sh *shooter) run(ctx context.Context, held, fresh bool, tolerance float64) error {
+	sh.round++
+	st := sh.r.st
+	st.sens = nil
+	if fresh {
+		st.sens = newSensitivity(sh.s)
+	}
+	var err error
+	if held {
+		err = sh.r.repeat(ctx, sh.x)
+	} else {
+		err = sh.r.adaptive(ctx, sh.x, tolerance)
+	}
+	if err != nil {
+		return err
+	}
+	for i := range sh.gap {
+		sh.gap[i] = st.start.x[i] - sh.x[i]
+	}
+	if fresh {
+		sh.factor()
+	}
+	return nil
+}
+
+// factor decomposes I − Φ.
+func (sh *shooter) factor() {
+	n := sh.s.n
+	m := mat.NewDense(n, n, nil)
+	for i := range n {
+		for j := range n {
+			v := -sh.r.st.sens.start[i*n+j]
+			if i == j {
+				v++
+			}
+			m.Set(i, j, v)
+		}
+	}
+	sh.lu.Factorize(m)
+	sh.ready = sh.lu.Cond() < 1e15
+}
+
+// newton solves (I − Φ)·delta = gap and returns the largest change of a node
+// voltage in source peaks, infinite when there is none.
+func (sh *shooter) newton() float64 {
+	if !sh.ready {
+		return math.Inf(1)
+	}
+	v := mat.NewVecDense(sh.s.n, sh.delta)
+	if err := sh.lu.SolveVecTo(v, false, mat.NewVecDense(sh.s.n, sh.gap)); err != nil {
+		var badly mat.Condition
+		if !errors.As(err, &badly) {
+			return math.Inf(1)
+		}
+	}
+	return sh.size(sh.delta)
+}
+
+// size is the largest node voltage of a vector in source peaks.
+func (sh *shooter) size(v []float64) float64 {
+	worst := 0.0
+	for i, x := range v {
+		if sh.s.volts[i] {
+			worst = max(worst, math.Abs(x))
+		}
+		if x != x {
+			return math.Inf(1)
+		}
+	}
+	return worst / sh.s.peak
+}
+
+// moderate scales a Newton step so that no capacitor's voltage moves by more
+// than a third of the source peak.
+func (sh *shooter) moderate() {
+	worst := 0.0
+	at := func(i int) float64 {
+		if i == sh.s.n {
+			return 0
+		}
+		return sh.delta[i]
+	}
+	for _, b := range sh.s.caps {
+		worst = max(worst, math.Abs(at(b.a)-at(b.b)))
+	}
+	if most := sh.s.peak / 3; worst > most {
+		for i := range sh.delta {
+			sh.delta[i] *= most / worst
+		}
+	}
+}
+
+// shift moves the state by f times the Newton step.
+func (sh *shooter) shift(f float64) {
+	for i, d := range sh.delta {
+		sh.x[i] += f * d
+	}
+}
+
+// plain runs one period and takes its end as the next start.
+func (sh *shooter) plain(ctx context.Context) error {
+	if err := sh.run(ctx, false, false, 30*sh.r.tolerance); err != nil {
+		return err
+	}
+	copy(sh.x, sh.r.st.start.x)
+	return nil
+}
+
+// approach brings the state near the answer with adaptive periods.
+func (sh *shooter) approach(ctx context.Context) error {
+	plain := plainStart
+	if sh.set.Start != nil {
+		plain = 0
+	}
+	for range plain {
+		if err := sh.plain(ctx); err != nil {
+			return sh.explain(err)
+		}
+	}
+	if err := sh.run(ctx, false, true, sh.r.tolerance); err != nil {
+		return sh.explain(err)
+	}
+	for sh.round < maxRounds {
+		size := sh.newton()
+		if size <= nearEnough {
+			sh.shift(1)
+			return nil
+		}
+		if err := sh.improve(ctx, size); err != nil {
+			return sh.explain(err)
+		}
+	}
+	return &NoSteadyError{fmt.Sprintf("the period still does not close to %.2g V after %d periods",
+		sh.size(sh.gap)*sh.s.peak, sh.round)}
+}
+
+// improve takes one Newton step if it brings the period nearer to closing,
+// shorter if need be, and plain periods where it does not.
+func (sh *shooter) improve(ctx context.Context, size float64) error {
+	before := sh.size(sh.gap)
+	if !math.IsInf(size, 1) {
+		sh.moderate()
+		old := append([]float64(nil), sh.x...)
+		for f := 1.0; f > 0.1; f /= 3 {
+			copy(sh.x, old)
+			sh.shift(f)
+			err := sh.run(ctx, false, true, sh.r.tolerance)
+			if ctx.Err() != nil {
+				return err
+			}
+			if err == nil && sh.size(sh.gap) < before {
+				return nil
+			}
+		}
+		copy(sh.x, old)
+	}
+	for range 3 {
+		if err := sh.plain(ctx); err != nil {
+			return err
+		}
+	}
+	return sh.run(ctx, false, true, sh.r.tolerance)
+}
+
+// settle holds the mesh and closes the period, measuring as it goes.
+func (sh *shooter) settle(ctx context.Context) (Steady, error) {
+	fresh := false
+	last := nearEnough
+	for sh.round < 2*maxRounds {
+		g := newGauge(sh.s, &sh.c, sh.set.Waves)
+		sh.r.each = g.step
+		g.begin(sh.r)
+		err := sh.run(ctx, true, fresh, 0)
+		sh.r.each = nil
+		if errors.Is(err, errMesh) {
+			err = sh.run(ctx, false, true, sh.r.tolerance)
+			sh.newton()
+			sh.moderate()
+			sh.shift(1)
+			last = 1
+			if err != nil {
+				return Steady{}, sh.explain(err)
+			}
+			continue
+		}
+		if err != nil {
+			return Steady{}, sh.explain(err)
+		}
+		size := sh.newton()
+		if size <= closed {
+			out := g.finish(sh)
+			return out, nil
+		}
+		fresh = size > 0.1*last
+		last = size
+		sh.moderate()
+		sh.shift(1)
+	}
+	return Steady{}, &NoSteadyError{"the last digits do not settle"}
+}
+
+// explain turns an integrator's complaint into an answer.
+func (sh *shooter) explain(err error) error {
+	var stuck *stuckError
+	if errors.As(err, &stuck) {
+		return &NoSteadyError{stuck.Error()}
+	}
+	return err
+}
+
+func cubeRoot(x float64) float64 { return math.Cbrt(x) }
