@@ -9,7 +9,7 @@ const thermalVoltage = 0.025693
 type junction struct {
 	is, nvt, rs  float64
 	shift        float64 // ln(IS·RS/(N·VT)) + IS·RS/(N·VT)
-	leak         float64 // conductance in reverse [S]
+	leak, own    float64 // conductance in reverse, with and without what the search adds [S]
 	cj0, vj, m   float64
 	transit      float64
 	cHalf, qHalf float64 // at half the built-in voltage, where the law turns into a line
@@ -23,7 +23,7 @@ func newJunction(d Diode, least, leak float64) junction {
 	if vt == 0 {
 		vt = thermalVoltage
 	}
-	j := junction{is: d.IS, nvt: d.N * vt, rs: max(d.RS, least), leak: d.Leakage + leak,
+	j := junction{is: d.IS, nvt: d.N * vt, rs: max(d.RS, least), leak: d.Leakage + leak, own: d.Leakage + leak,
 		cj0: d.CJ0, vj: d.VJ, m: d.M, transit: d.Transit}
 	j.shift = math.Log(j.is*j.rs/j.nvt) + j.is*j.rs/j.nvt
 	if j.vj > 0 && j.cj0 > 0 {

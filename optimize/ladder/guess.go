@@ -6,11 +6,8 @@ package ladder
 // its two nodes; that fixes each node at both crests.
 func (e *estimator) state(load float64) []float64 {
 	n := &e.net
-	share := 0.0 // of the crest that the diodes and resistances leave
-	if e.noLoad > 0 {
-		share = max(0, 1-e.conduction(load)/e.noLoad) * e.crest
-	}
-	q := e.charge(load)
+	share := max(0.05, 1-e.conduction(load)/e.noLoad) * e.crest // what the diodes and resistances leave
+	q := min(e.charge(load), 0.4*share/e.crest*e.noLoad/e.unit) // beyond, the balance says too little
 	still := map[int]float64{}
 	for _, w := range n.ends {
 		still[w.node] = 0

@@ -11,7 +11,7 @@ import (
 
 // Settings tunes a solve; the zero value is right.
 type Settings struct {
-	Tolerance float64 // local error relative to the source peak; zero: 1e-5
+	Tolerance float64 // local error relative to the source peak; zero: 3e-6
 	Waves     bool    // keep the waveforms
 	Start     *Steady // a neighbour's solution to start from; nil: the estimate
 }
@@ -35,18 +35,46 @@ func Solve(ctx context.Context, c Circuit, set *Settings) (Steady, error) {
 		set = &Settings{}
 	}
 	sh := newShooter(c, set)
-	if err := sh.approach(ctx); err != nil {
+	err := sh.approach(ctx, roundsDirect)
+	var none *NoSteadyError
+	if errors.As(err, &none) {
+		err = sh.descend(ctx)
+	}
+	if err != nil {
 		return Steady{}, err
 	}
 	return sh.settle(ctx)
 }
 
+// descend comes to a circuit that resists, such as one without load, whose
+// diodes hardly conduct, through a row of circuits in which every diode leaks
+// less and less: from each to the next the voltages rise a little, so that
+// the diodes conduct and Newton has something to hold.
+func (sh *shooter) descend(ctx context.Context) error {
+	sh.x = sh.guess()
+	unit := 1e9 * sh.s.whisper
+	for leak := 0.3; leak > 1e-9; leak /= 8 {
+		sh.s.leakMore(leak * unit)
+		if err := sh.approach(ctx, roundsEach); err != nil {
+			var none *NoSteadyError
+			if errors.As(err, &none) && leak > 1e-8 {
+				continue
+			}
+			return err
+		}
+	}
+	sh.s.leakMore(0)
+	return sh.approach(ctx, roundsDirect)
+}
+
 // Limits of the shooting.
 const (
-	maxRounds  = 120  // Newton rounds and plain periods together
-	nearEnough = 3e-3 // Newton step, in source peaks, below which the mesh is held
-	closed     = 2e-6 // Newton step, in source peaks, that ends the search
-	plainStart = 2    // periods run plainly before the first Newton step
+	roundsDirect = 24   // periods for the first approach, and for the last
+	roundsEach   = 12   // periods for each circuit on the way down
+	maxRounds    = 60   // periods to close the last digits
+	nearEnough   = 3e-3 // Newton step, in source peaks, below which the mesh is held
+	closed       = 2e-6 // Newton step, in source peaks, that ends the search
+	plainStart   = 2    // periods run plainly before the first Newton step
 )
 
 // shooter is one solve.
@@ -67,7 +95,7 @@ func newShooter(c Circuit, set *Settings) *shooter {
 	s := newSystem(c)
 	tolerance := set.Tolerance
 	if tolerance <= 0 {
-		tolerance = 1e-5
+		tolerance = 3e-6
 	}
 	sh := &shooter{c: c, set: set, s: s, r: newRunner(s, tolerance),
 		gap: make([]float64, s.n), delta: make([]float64, s.n)}
@@ -212,20 +240,27 @@ func (sh *shooter) plain(ctx context.Context) error {
 }
 
 // approach brings the state near the answer with adaptive periods.
-func (sh *shooter) approach(ctx context.Context) error {
+func (sh *shooter) approach(ctx context.Context, rounds int) error {
+	rounds += sh.round
 	plain := plainStart
 	if sh.set.Start != nil {
 		plain = 0
 	}
-	for range plain {
-		if err := sh.plain(ctx); err != nil {
+	for k := range plain {
+		err := sh.plain(ctx)
+		var stuck *stuckError
+		if k == 0 && errors.As(err, &stuck) { // an impossible guess: start from rest instead
+			clear(sh.x)
+			err = sh.plain(ctx)
+		}
+		if err != nil {
 			return sh.explain(err)
 		}
 	}
 	if err := sh.run(ctx, false, true, sh.r.tolerance); err != nil {
 		return sh.explain(err)
 	}
-	for sh.round < maxRounds {
+	for sh.round < rounds {
 		size := sh.newton()
 		if size <= nearEnough {
 			sh.shift(1)
@@ -271,7 +306,7 @@ func (sh *shooter) improve(ctx context.Context, size float64) error {
 func (sh *shooter) settle(ctx context.Context) (Steady, error) {
 	fresh := false
 	last := nearEnough
-	for sh.round < 2*maxRounds {
+	for most := sh.round + maxRounds; sh.round < most; {
 		g := newGauge(sh.s, &sh.c, sh.set.Waves)
 		sh.r.each = g.step
 		g.begin(sh.r)

@@ -27,6 +27,7 @@ type system struct {
 	out     branch    // across the ladder's output
 	final   branch    // across the load, after the filter
 	names   []string
+	whisper float64 // conductance too small to show [S]
 }
 
 // winding is one end of the source. Without inductance its first element is
@@ -137,9 +138,10 @@ func (b *builder) addStrays() {
 
 func (b *builder) addDiodes() {
 	least, leak := b.least(), b.whisper()
+	b.s.whisper = leak
 	for i, d := range b.c.Diodes {
 		if d.CJ0 == 0 { // keeps every node's equation a differential one
-			d.CJ0, d.VJ = leak/b.c.Source.Frequency, 0
+			d.CJ0, d.VJ = 100*leak/b.c.Source.Frequency, 0
 		}
 		b.s.diodes = append(b.s.diodes, newJunction(d, least, leak))
 		b.element(b.net.diodes[i])
@@ -210,6 +212,13 @@ func (b *builder) number() {
 			w.unknown = int32(place(int(w.unknown)))
 			w.cross = s.slot(int(w.node), int(w.unknown))
 		}
+	}
+}
+
+// leakMore gives every diode a leakage conductance beyond its own.
+func (s *system) leakMore(g float64) {
+	for i := range s.diodes {
+		s.diodes[i].leak = s.diodes[i].own + g
 	}
 }
 
