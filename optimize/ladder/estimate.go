@@ -184,18 +184,3 @@ func conductionCos(ir, v float64) float64 {
 	}
 	return math.Cos(theta)
 }
-
-// Bound is truly optimistic: no steady state of the circuit has a higher mean
-// output or, where the load is drawn in full, a smaller ripple.
-func Bound(c Circuit) (mostMeanV, leastRippleV float64) {
-	e := newEstimator(c)
-	s := e.solve()
-	return min(e.noLoad, e.noLoad-boundDrop*s.DropV), boundRipple * s.RippleV
-}
-
-// Shares of the charge-balance drop and ripple that were never undercut, for
-// a sine, in the random trials of the package's tests.
-const (
-	boundDrop   = 0.75
-	boundRipple = 0.5
-)

@@ -16,8 +16,14 @@ func (e *stuckError) Error() string {
 	return fmt.Sprintf("the integration cannot go on at %.4g of the period: the circuit is too stiff there", e.at/e.period)
 }
 
-// maxSteps bounds the work of one period.
-const maxSteps = 20000
+// Bounds of the work of one period. Past manySteps the tolerance is doubled
+// again and again: what needs so many steps is the ringing of leakage
+// inductance with junction capacitance, which the integrator then damps, as
+// the losses of a real winding do.
+const (
+	manySteps = 800
+	maxSteps  = 8000
+)
 
 // runner integrates whole periods.
 type runner struct {
@@ -67,6 +73,9 @@ func (r *runner) adaptive(ctx context.Context, x []float64, tolerance float64) e
 			h = left
 		} else if h > left/2 {
 			h = left / 2
+		}
+		if count > manySteps && count%(manySteps/8) == 0 {
+			tolerance *= 2
 		}
 		err, ok := r.st.step(h)
 		if count > maxSteps || h < 1e-13*period {

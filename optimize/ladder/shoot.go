@@ -73,7 +73,7 @@ const (
 	roundsEach   = 12   // periods for each circuit on the way down
 	maxRounds    = 60   // periods to close the last digits
 	nearEnough   = 3e-3 // Newton step, in source peaks, below which the mesh is held
-	closed       = 2e-6 // Newton step, in source peaks, that ends the search
+	closed       = 1e-5 // Newton step, in source peaks, that ends the search
 	plainStart   = 2    // periods run plainly before the first Newton step
 )
 

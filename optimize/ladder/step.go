@@ -36,7 +36,7 @@ func newStepper(s *system) *stepper {
 	st := &stepper{s: s, start: s.newPoint(), mid: s.newPoint(), end: s.newPoint(),
 		past: make([]float64, s.elements()), r: make([]float64, s.n+1),
 		values: make([]float64, s.m.size()+1), rate: make([]float64, s.n+1)}
-	st.limit = 1e-6 * s.peak
+	st.limit = 1e-7 * s.peak
 	for i := range s.diodes {
 		st.limit = min(st.limit, 0.02*s.diodes[i].nvt)
 	}
