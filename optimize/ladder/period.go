@@ -21,8 +21,8 @@ func (e *stuckError) Error() string {
 // inductance with junction capacitance, which the integrator then damps, as
 // the losses of a real winding do.
 const (
-	manySteps = 800
-	maxSteps  = 8000
+	manySteps = 2400
+	maxSteps  = 12000
 )
 
 // runner integrates whole periods.

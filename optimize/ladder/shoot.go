@@ -11,7 +11,7 @@ import (
 
 // Settings tunes a solve; the zero value is right.
 type Settings struct {
-	Tolerance float64 // local error relative to the source peak; zero: 3e-6
+	Tolerance float64 // local error relative to the source peak; zero: 1e-6
 	Waves     bool    // keep the waveforms
 	Start     *Steady // a neighbour's solution to start from; nil: the estimate
 }
@@ -95,7 +95,7 @@ func newShooter(c Circuit, set *Settings) *shooter {
 	s := newSystem(c)
 	tolerance := set.Tolerance
 	if tolerance <= 0 {
-		tolerance = 3e-6
+		tolerance = 1e-6
 	}
 	sh := &shooter{c: c, set: set, s: s, r: newRunner(s, tolerance),
 		gap: make([]float64, s.n), delta: make([]float64, s.n)}
