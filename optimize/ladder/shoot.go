@@ -74,6 +74,7 @@ const (
 	maxRounds    = 60   // periods to close the last digits
 	nearEnough   = 3e-3 // Newton step, in source peaks, below which the mesh is held
 	closed       = 1e-5 // Newton step, in source peaks, that ends the search
+	closedCharge = 1e-4 // charge, in the load's, that the period may leave in a capacitor
 	plainStart   = 2    // periods run plainly before the first Newton step
 )
 
@@ -327,9 +328,8 @@ func (sh *shooter) settle(ctx context.Context) (Steady, error) {
 			return Steady{}, sh.explain(err)
 		}
 		size := sh.newton()
-		if size <= closed {
-			out := g.finish(sh)
-			return out, nil
+		if size <= closed && (sh.astray() <= closedCharge*g.load || size <= closed/1000) {
+			return g.finish(sh), nil
 		}
 		fresh = size > 0.1*last
 		last = size
@@ -337,6 +337,15 @@ func (sh *shooter) settle(ctx context.Context) (Steady, error) {
 		sh.shift(1)
 	}
 	return Steady{}, &NoSteadyError{"the last digits do not settle"}
+}
+
+// astray is the most charge that any capacitor gains over the period [C].
+func (sh *shooter) astray() float64 {
+	worst, at := 0.0, sh.r.st.start
+	for k := range sh.s.stores {
+		worst = max(worst, math.Abs(at.c[k]*across(sh.gap, sh.s.branch(k))))
+	}
+	return worst
 }
 
 // explain turns an integrator's complaint into an answer.

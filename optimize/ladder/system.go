@@ -28,6 +28,8 @@ type system struct {
 	final   branch    // across the load, after the filter
 	names   []string
 	whisper float64 // conductance too small to show [S]
+	drive   float64 // 1, or 0 when the source is switched off
+	lead    float64 // phase at t = 0, in periods
 }
 
 // winding is one end of the source. Without inductance its first element is
@@ -48,7 +50,7 @@ func (s *system) elements() int { return s.endAt() + 2*len(s.ends) }
 // newSystem writes the circuit's equations.
 func newSystem(c Circuit) *system {
 	net := forms[c.Topology].build(c.Stages)
-	s := &system{period: 1 / c.Source.Frequency, peak: c.Source.Peak, wave: c.Source.wave(), polar: 1,
+	s := &system{period: 1 / c.Source.Frequency, peak: c.Source.Peak, wave: c.Source.wave(), polar: 1, drive: 1,
 		load: c.Load, knee: 0.01 * c.Source.Peak}
 	if c.Negative {
 		s.polar = -1
@@ -231,7 +233,19 @@ func (s *system) slot(i, j int) int32 {
 	return s.m.slot(i, j)
 }
 
+// branch is the pair of nodes that an element joins, ground as such.
+func (s *system) branch(e int) branch {
+	b := branch{int(s.a[e]), int(s.b[e])}
+	if b.a == s.n {
+		b.a = ground
+	}
+	if b.b == s.n {
+		b.b = ground
+	}
+	return b
+}
+
 // sourceAt is the open-circuit voltage of a winding end.
 func (s *system) sourceAt(t, phase float64) float64 {
-	return s.polar * phase * s.peak * s.wave.at(t/s.period)
+	return s.drive * s.polar * phase * s.peak * s.wave.at(t/s.period+s.lead)
 }
