@@ -186,7 +186,7 @@ func (g *gauge) note(p *point) {
 func (g *gauge) finish(sh *shooter) Steady {
 	s, f := g.s, 1/g.s.period
 	out := Steady{RippleV: g.out.max - g.out.min, LoadA: g.load * f, LoadW: g.loadJ * f,
-		ResidualV: sh.size(sh.gap) * s.peak, Periods: sh.r.periods, Waves: g.waves,
+		ResidualV: sh.size(sh.gap) * s.peak, Periods: sh.r.periods, Waves: g.waves, Note: sh.note,
 		start: append([]float64(nil), sh.x...)}
 	out.MeanV, out.MinV, out.MaxV = g.out.sum*f, g.out.min, g.out.max
 	if g.c.Negative {
