@@ -23,16 +23,17 @@ func Estimate(c Circuit) Estimated {
 
 // estimator holds what does not depend on the load current.
 type estimator struct {
-	c      Circuit
-	net    netlist
-	crest  float64   // half of the source's swing [V]
-	swing  []float64 // alternating amplitude of each node, for a source of 1
-	noLoad float64
-	unit   float64 // charge-balance drop for q = 1 [V/C]
-	ripple float64 // ripple for q = 1 [V/C]
-	nd     float64 // diodes in the climb
-	diodes []junction
-	values []float64 // capacitance of each capacitor at its bias [F]
+	c       Circuit
+	net     netlist
+	crest   float64   // half of the source's swing [V]
+	swing   []float64 // alternating amplitude of each node, for a source of 1
+	noLoad  float64
+	unit    float64 // charge-balance drop for q = 1 [V/C]
+	ripple  float64 // ripple for q = 1 [V/C]
+	drained float64 // what the load takes from the column per period, for q = 1 [V/C]
+	nd      float64 // diodes in the climb
+	diodes  []junction
+	values  []float64 // capacitance of each capacitor at its bias [F]
 }
 
 func newEstimator(c Circuit) *estimator {
@@ -55,6 +56,9 @@ func newEstimator(c Circuit) *estimator {
 		e.values = append(e.values, value)
 	}
 	e.unit, e.ripple = e.net.chargeBalance(e.values)
+	for _, k := range e.net.column {
+		e.drained -= e.net.drain[k] / e.values[k]
+	}
 	return e
 }
 
@@ -135,8 +139,8 @@ func (e *estimator) solve() Estimated {
 		}
 	}
 	i, _ := e.c.Load.at(v, 0.01*e.c.Source.Peak)
-	q := e.charge(i)
-	out.MeanV, out.LoadA, out.DropV, out.RippleV = v, i, q*e.unit, q*e.ripple
+	_, ripple := e.rectify(i)
+	out.MeanV, out.LoadA, out.DropV, out.RippleV = v, i, e.charge(i)*e.unit, ripple
 	return out
 }
 
@@ -146,9 +150,69 @@ func (e *estimator) charge(i float64) float64 { return i / e.c.Source.Frequency 
 
 // at is the mean output at a load current.
 func (e *estimator) at(i float64) float64 {
-	v := e.noLoad - e.conduction(i) - e.charge(i)*e.unit
-	return max(v, 0)
+	mean, _ := e.rectify(i)
+	return mean
 }
+
+// rectify gives mean output and ripple at a load current. Every diode of the
+// ladder is taken for the same rectifier, whose own excess over the charge
+// balance is added to the ladder's once per diode of the climb.
+func (e *estimator) rectify(i float64) (mean, ripple float64) {
+	q := e.charge(i)
+	slow := q * e.unit
+	plain := max(e.noLoad-e.conduction(i)-slow, 0)
+	ideal := e.diodes[0].nvt < 1e-6*e.noLoad/e.nd // the books' diode, which conducts in no time
+	if i <= 0 || ideal || slow > 0.8*e.noLoad || e.c.Source.Waveform == Square || e.c.Source.Waveform == Table {
+		return plain, q * e.ripple
+	}
+	r := rectified{diode: e.diodes[e.net.climb[0]], crest: e.noLoad / e.nd, jump: 2 * slow / e.nd,
+		charge: q * e.net.share, period: 1 / e.c.Source.Frequency, pointed: e.c.Source.Waveform == Triangle}
+	r.diode.rs += e.net.feed * e.c.Source.Resistance
+	r.diode.shift = math.Log(r.diode.is*r.diode.rs/r.diode.nvt) + r.diode.is*r.diode.rs/r.diode.nvt
+	after, busy, ok := r.solve()
+	if !ok || after <= 0 {
+		return plain, q * e.ripple
+	}
+	drain := q * e.drained / 2 // the part of the slow drop that the load's steady drain makes
+	mean = after*e.nd - slow + drain*(1-(1-busy)*(1-busy))
+	return max(0, mean), e.wave(q, busy)
+}
+
+// wave is the peak-to-peak ripple: the sawtooth of the charge balance, whose
+// fall pauses while the diodes carry the load, and what the junction and
+// stray capacitances couple into the column.
+func (e *estimator) wave(q, busy float64) float64 {
+	coupled := e.crest * across(e.swing, branch{e.net.plus, e.net.minus})
+	jump := [2]float64{}
+	for _, k := range e.net.column {
+		jump[0] += q * e.net.pulses[0][k] / e.values[k]
+		jump[1] += q * e.net.pulses[1][k] / e.values[k]
+	}
+	drain := q * e.drained
+	low, high := math.Inf(1), math.Inf(-1)
+	const parts = 24
+	for k := range 2*parts + 1 {
+		turn := float64(k) / (2 * parts)
+		level := jump[0] - drain*turn + coupled*math.Cos(2*math.Pi*turn)
+		if k > parts {
+			level += jump[1]
+		}
+		low, high = min(low, level), max(high, level)
+		if k == parts {
+			level += jump[1]
+			low, high = min(low, level), max(high, level)
+		}
+	}
+	if e.net.twice() && e.c.Stages > 1 {
+		busy *= twiceBusy
+	}
+	return max(0, high-low-drain*busy)
+}
+
+// twiceBusy is how much longer than a single rectifier the two sides of an
+// output that is refreshed at both crests hold it up where stages stand above each other, fitted once to steady
+// states of full-wave ladders.
+const twiceBusy = 1.3
 
 // conduction is what the diodes and the resistances take from the crests.
 func (e *estimator) conduction(i float64) float64 {
