@@ -8,11 +8,15 @@ import (
 	"rungwright/catalog/quantity"
 )
 
-// Catalog is everything that was read, parts in the order of part number.
+// Catalog is everything that was read: parts in the order of part number,
+// suppliers in that of name, files in the order read.
 type Catalog struct {
+	Title     string // the first that a file gives
 	Parts     []*Part
 	Suppliers []Supplier
-	Inputs    []Input // the files that were read
+	Inputs    []Input
+
+	index map[string]*Part // by numberKey; nil in a catalog made by hand
 }
 
 // Input is a file that was read, with the SHA-256 of its bytes in hex.

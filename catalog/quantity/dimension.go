@@ -1,6 +1,6 @@
 package quantity
 
-import "fmt"
+import "strings"
 
 // Dimension is what a value measures, with the unit it is printed in.
 type Dimension int
@@ -28,6 +28,48 @@ const (
 	Proportion
 	SlewRate
 )
+
+// noun is how messages speak of a dimension.
+type noun struct {
+	name    string // with its article: "a voltage"
+	units   string // the unit in words, plural: "volts"
+	example string
+}
+
+var nouns = map[Dimension]noun{
+	None:              {"a plain number", "no unit", "1.9"},
+	Voltage:           {"a voltage", "volts", "25 V"},
+	Current:           {"a current", "amperes", "1.2 mA"},
+	Resistance:        {"a resistance", "ohms", "4.7 kohm"},
+	Capacitance:       {"a capacitance", "farads", "4.7 nF"},
+	Inductance:        {"an inductance", "henries", "120 uH"},
+	Frequency:         {"a frequency", "hertz", "32 kHz"},
+	Time:              {"a time", "seconds, hours or days", "60 ns"},
+	Power:             {"a power", "watts", "250 mW"},
+	ApparentPower:     {"an apparent power", "volt-amperes", "6 VA"},
+	Energy:            {"an energy", "joules", "1 J"},
+	Charge:            {"a charge", "coulombs", "40 nC"},
+	Temperature:       {"a temperature", "degrees Celsius", "85 °C"},
+	TemperatureRise:   {"a temperature difference", "kelvins", "10 K"},
+	ThermalResistance: {"a thermal resistance", "kelvins per watt", "90 K/W"},
+	Length:            {"a length", "metres", "18 mm"},
+	Volume:            {"a volume", "cubic metres", "250 mm³"},
+	Area:              {"an area", "square metres", "400 mm²"},
+	Proportion:        {"a proportion", "per cent", "10 %"},
+	SlewRate:          {"a rate of voltage change", "volts per second", "50 V/us"},
+}
+
+// Name is the dimension in words with its article, "a voltage".
+func (d Dimension) Name() string { return nouns[d].name }
+
+// noun is the dimension in one or two words without an article, "voltage".
+func (d Dimension) noun() string {
+	_, word, _ := strings.Cut(d.Name(), " ")
+	return word
+}
+
+// Example is a well-written value of the dimension, "25 V".
+func (d Dimension) Example() string { return nouns[d].example }
 
 // The dimension of each named type.
 func (Volts) Dimension() Dimension         { return Voltage }
@@ -71,14 +113,3 @@ func (v CubicMeters) String() string   { return Format(float64(v), Volume, 4) }
 func (v SquareMeters) String() string  { return Format(float64(v), Area, 4) }
 func (v Ratio) String() string         { return Format(float64(v), Proportion, 4) }
 func (v VoltPerSecond) String() string { return Format(float64(v), SlewRate, 4) }
-
-// Parse reads text as a value of the dimension, in its SI base unit.
-func Parse(text string, d Dimension) (float64, error) {
-	return 0, fmt.Errorf("not implemented")
-}
-
-// Format prints v with its unit and at most digits significant digits, in
-// engineering notation (%, °C and mm³ where the trade uses those).
-func Format(v float64, d Dimension, digits int) string {
-	return fmt.Sprintf("%.*g", digits, v)
-}

@@ -1,6 +1,26 @@
 // Package quantity holds values with units: it alone parses and prints them.
 // Inside the program every value is a plain float64 in its SI base unit; the
 // named types below say which. Temperatures are degrees Celsius.
+//
+// # What is read
+//
+// A number and a unit ("4.7 nF", "4.7nF", "1e-9 F"), with SI prefixes from
+// femto to tera where the unit takes them, µ or u for micro, Ω or ohm for
+// ohms; the RKM code of IEC 60062 for resistance, capacitance and inductance
+// ("4k7", "4R7", "4n7", "100p"); per cent and ppm for proportions. Letter
+// case is never guessed, for m and M are nine powers of ten apart.
+//
+// # What is refused
+//
+// A number without a unit (a bare 0 is read, for it is the same in any unit,
+// except as a temperature), another dimension's unit, text that is not finite
+// decimal, a decimal comma and any other separator within the digits, and
+// text of more than 64 characters. The error says how to mend it.
+//
+// # Exactness
+//
+// Decimal powers are applied to the text, not by multiplying, so that "4n7",
+// "4.7 nF" and the Go constant 4.7e-9 are the same float64.
 package quantity
 
 // Named SI values. The comment is the unit that the float holds.
