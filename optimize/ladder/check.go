@@ -65,6 +65,7 @@ func (s Source) check(bad *faults) {
 	bad.positive("source frequency", s.Frequency)
 	bad.notNegative("source resistance", s.Resistance)
 	bad.notNegative("source leakage inductance", s.Leakage)
+	bad.notNegative("ring quality factor", s.RingQ)
 	bad.when(!(s.Edge >= 0 && s.Edge <= 0.5), "a square wave's edge must be 0 to 0.5 of a period, not %g", s.Edge)
 	switch s.Waveform {
 	case "", Sine, Square, Triangle:

@@ -26,6 +26,7 @@ type Source struct {
 	Frequency  float64   // [Hz]
 	Resistance float64   // in each winding end, surge resistor included [Ω]
 	Leakage    float64   // leakage inductance in each winding end [H]
+	RingQ      float64   // quality factor at which leakage inductance rings with the ladder's junction and stray capacitance; zero: undamped
 	Edge       float64   // rise time of a square wave, in periods; zero: 1/50
 	Points     []float64 // of a table waveform: equally spaced over one period, in units of Peak
 }

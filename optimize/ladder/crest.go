@@ -3,7 +3,7 @@ package ladder
 import "math"
 
 // crestPoints is the number of steps over one period of the scalar model.
-const crestPoints = 72
+const crestPoints = 56
 
 // crestGrid clusters the phases of one period around the crest, where a
 // rectifier conducts.
@@ -49,7 +49,7 @@ func (r *rectified) solve() (after, conducting float64, ok bool) {
 		}
 		step := (end - v) / max(1-slope, 1e-9)
 		v += max(-r.crest/2, min(r.crest/2, step))
-		if math.Abs(step) < 1e-5*r.crest {
+		if math.Abs(step) < 1e-4*r.crest {
 			return v, part, true
 		}
 	}
@@ -72,7 +72,7 @@ func (r *rectified) run(v float64) (end, slope, conducting float64) {
 			i, g = r.diode.current(src - v)
 			d := (v - known - h*i) / (1 + h*g)
 			v -= d
-			if math.Abs(d) < 1e-7*r.crest {
+			if math.Abs(d) < 1e-6*r.crest {
 				i += g * d
 				break
 			}

@@ -117,42 +117,52 @@ func (n *netlist) levels(crest float64) []float64 {
 	return n.spread(links, known)
 }
 
-// solve finds the output at which load and ladder agree.
+// solve finds the output at which load and ladder agree, by the secant kept
+// within a bracket: the ladder's output falls as its current rises.
 func (e *estimator) solve() Estimated {
-	out := Estimated{NoLoadV: e.noLoad - e.floor()}
-	lo, hi := 0.0, out.NoLoadV
-	v := hi
-	for range 60 {
-		i, _ := e.c.Load.at(v, 0.01*e.c.Source.Peak)
-		next := e.at(i)
-		if math.Abs(next-v) <= 1e-9*e.noLoad {
+	knee := 0.01 * e.c.Source.Peak
+	mean, ripple, i := 0.0, 0.0, 0.0
+	excess := func(v float64) float64 {
+		i, _ = e.c.Load.at(v, knee)
+		mean, ripple = e.rectify(i)
+		return mean - v
+	}
+	lo, hi := 0.0, e.noLoad
+	v, f := hi, excess(hi)
+	for range 40 {
+		if math.Abs(f) <= 1e-6*e.noLoad {
 			break
 		}
-		if next < v {
+		if f < 0 {
 			hi = v
 		} else {
 			lo = v
 		}
-		v = max(lo, min(hi, next))
-		if v == lo || v == hi || e.c.Load.Current == 0 {
-			v = (lo + hi) / 2
+		next := mean // exact for a constant current
+		if e.c.Load.Current == 0 || next <= lo || next >= hi {
+			next = (lo + hi) / 2
+		}
+		was, fWas := v, f
+		v = next
+		f = excess(v)
+		if slope := (f - fWas) / (v - was); slope < 0 && math.Abs(f) > 1e-6*e.noLoad {
+			if s := v - f/slope; s > lo && s < hi {
+				if f < 0 {
+					hi = min(hi, v)
+				} else {
+					lo = max(lo, v)
+				}
+				v = s
+				f = excess(v)
+			}
 		}
 	}
-	i, _ := e.c.Load.at(v, 0.01*e.c.Source.Peak)
-	_, ripple := e.rectify(i)
-	out.MeanV, out.LoadA, out.DropV, out.RippleV = v, i, e.charge(i)*e.unit, ripple
-	return out
+	return Estimated{NoLoadV: e.noLoad, MeanV: mean, RippleV: ripple, LoadA: i, DropV: e.charge(i) * e.unit}
 }
 
 // charge is what every diode of the ladder must pass per period: the load's
 // and what recovery returns.
 func (e *estimator) charge(i float64) float64 { return i / e.c.Source.Frequency }
-
-// at is the mean output at a load current.
-func (e *estimator) at(i float64) float64 {
-	mean, _ := e.rectify(i)
-	return mean
-}
 
 // rectify gives mean output and ripple at a load current. Every diode of the
 // ladder is taken for the same rectifier, whose own excess over the charge
@@ -225,10 +235,6 @@ func (e *estimator) conduction(i float64) float64 {
 	crest := max(e.noLoad-drop, 0) / e.nd
 	return min(e.noLoad, drop+e.nd*crest*(1-conductionCos(i*e.net.share*resistance, crest)))
 }
-
-// floor is the drop of the diodes where nothing is drawn: leakage and
-// saturation current, a tenth of a volt each at most.
-func (e *estimator) floor() float64 { return 0 }
 
 // conductionCos solves sin θ − θ·cos θ = π·ir/v and returns cos θ, 0 where
 // the resistance takes all.

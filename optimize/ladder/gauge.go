@@ -163,7 +163,18 @@ func (g *gauge) source(h float64, p0, p1, p2 *point) {
 		g.ends[k].add(h, i0, i1, i2)
 		g.endJ[k] += sum3(h, v0*i0, v1*i1, v2*i2)
 		g.endVV[k] += sum3(h, v0*v0, v1*v1, v2*v2)
+		if w.damp > 0 { // what the damping takes, less what is counted for the resistance below
+			d0, d1, d2 := p0.x[w.node]-v0, p1.x[w.node]-v1, p2.x[w.node]-v2
+			g.resistJ += sum3(h, g.s.endLoss(p0, w, d0, i0), g.s.endLoss(p1, w, d1, i1), g.s.endLoss(p2, w, d2, i2))
+		}
 	}
+}
+
+// endLoss is the power in a damped winding end beyond r·i² of its whole
+// current [W].
+func (s *system) endLoss(p *point, w *winding, drop, current float64) float64 {
+	inner := p.x[w.unknown]
+	return w.damp*drop*drop + w.r*(inner*inner-current*current)
 }
 
 // note keeps the waves at a point, in the sign of the circuit.

@@ -97,7 +97,7 @@ func (r *runner) adaptive(ctx context.Context, x []float64, tolerance float64) e
 		}
 		r.accept(h)
 		r.mesh = append(r.mesh, r.st.start.t)
-		h = min(h*min(2.5, max(0.3, 0.85*cubeRoot(tolerance/max(err, 1e-300)))), period/50)
+		h = min(h*min(2.5, max(0.3, 0.85*cubeRoot(tolerance/max(err, 1e-300)))), period/100)
 	}
 	return nil
 }

@@ -63,7 +63,7 @@ func (s *system) evaluateEnd(p *point, e int, w *winding) {
 		return
 	}
 	current := p.x[w.unknown]
-	p.i[e] = -current
+	p.i[e], p.g[e] = w.damp*(p.x[w.node]-open)-current, w.damp
 	p.q[e+1], p.c[e+1] = -w.l*current, -w.l
 	p.i[e+1], p.g[e+1] = -(w.r*current + p.x[w.node] - open), -w.r
 }

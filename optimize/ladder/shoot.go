@@ -88,7 +88,7 @@ const (
 	roundsDirect = 24   // periods for the first approach, and for the last
 	roundsEach   = 12   // periods for each circuit on the way down
 	maxRounds    = 60   // periods to close the last digits
-	nearEnough   = 3e-3 // Newton step, in source peaks, below which the mesh is held
+	nearEnough   = 5e-4 // Newton step, in source peaks, below which the mesh is held
 	closed       = 1e-5 // Newton step, in source peaks, that ends the search
 	closedCharge = 1e-4 // charge, in the load's, that the period may leave in a capacitor
 	plainRest    = 40   // periods run plainly from rest

@@ -36,8 +36,9 @@ type system struct {
 // a conductance behind the source voltage and the second is idle.
 type winding struct {
 	phase, g, r, l float64
-	node, unknown  int32 // unknown is −1 without inductance
-	cross          int32 // matrix slot that joins the two
+	damp           float64 // conductance across resistance and inductance [S]
+	node, unknown  int32   // unknown is −1 without inductance
+	cross          int32   // matrix slot that joins the two
 }
 
 // element ranges.
@@ -158,9 +159,12 @@ func (b *builder) addResists() {
 
 func (b *builder) addLoadAndEnds() {
 	b.element(b.s.final)
-	r := max(b.c.Source.Resistance, b.least())
-	for i, e := range b.net.ends {
-		w := winding{phase: e.phase, g: 1 / r, r: r, l: b.c.Source.Leakage, node: int32(e.node), unknown: -1}
+	r, damp := max(b.c.Source.Resistance, b.least()), 0.0
+	if q, l := b.c.Source.RingQ, b.c.Source.Leakage; q > 0 && l > 0 {
+		damp = math.Sqrt(newEstimator(*b.c).inputCapacitance()/l) / q
+	}
+	for _, e := range b.net.ends {
+		w := winding{phase: e.phase, g: 1 / r, r: r, l: b.c.Source.Leakage, damp: damp, node: int32(e.node), unknown: -1}
 		if w.l > 0 {
 			w.unknown = int32(b.net.node("winding current"))
 			b.element(branch{e.node, ground})
@@ -170,7 +174,6 @@ func (b *builder) addLoadAndEnds() {
 			b.element(branch{ground, ground})
 		}
 		b.s.ends = append(b.s.ends, w)
-		_ = i
 	}
 }
 

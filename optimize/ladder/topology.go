@@ -63,3 +63,29 @@ func (t Topology) OutputFactor(stages int) int { return len(forms[t].build(stage
 // SmoothingColumn tells for each capacitor whether it is one of the smoothing
 // capacitors across which the output stands; the others couple.
 func (t Topology) SmoothingColumn(stages int) []bool { return forms[t].build(stages).smoothing }
+
+// CapacitorLevels is the ideal no-load voltage of each capacitor in units of
+// the source peak.
+func (t Topology) CapacitorLevels(stages int) []float64 {
+	n := forms[t].build(stages)
+	return n.capacitorLevels(1)
+}
+
+// FirstCoupling tells for each capacitor whether it is a first coupling
+// capacitor, the one that carries the charge of every stage.
+func (t Topology) FirstCoupling(stages int) []bool {
+	n := forms[t].build(stages)
+	out := make([]bool, len(n.capacitors))
+	for k, b := range n.capacitors {
+		for _, e := range n.ends {
+			if !n.smoothing[k] && (b.a == e.node || b.b == e.node) {
+				out[k] = true
+			}
+		}
+	}
+	return out
+}
+
+// Charge is the charge that one diode passes per period in units of the
+// load's: 1, or ½ where two sides share it.
+func (t Topology) Charge() float64 { return forms[t].build(1).share }
