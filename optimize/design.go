@@ -14,19 +14,24 @@ type Design struct {
 	Supply      Supply
 	Topology    ladder.Topology
 	Stages      int
+	Plan        Plan
 	Lines       []Line
 	Circuit     ladder.Circuit // nominal
 	Corners     []Corner
 	Targets     []Target
 	Stresses    []ratings.Stress // worst first
 	Cautions    []ratings.Caution
+	Failed      []string // what it breaks, in words; empty: it passes
 	StoredJ     float64
+	DischargeS  float64 // to below the touch voltage; infinite without a bleeder
+	StartUp     ladder.StartUp
 	UnitCost    decimal.Decimal // of the whole build, per unit
 	BuildCost   decimal.Decimal
 	Currency    string
 	Certificate Certificate
 	RunnersUp   []RunnerUp
 	Inputs      []catalog.Input
+	Notes       []string // what a reader should know, such as inputs that have changed since
 }
 
 // Role is what a line is for.
@@ -36,6 +41,7 @@ type Role string
 const (
 	RoleCoupling  Role = "coupling"
 	RoleSmoothing Role = "smoothing"
+	RoleLadder    Role = "coupling and smoothing" // one part for both
 	RoleRectifier Role = "rectifier"
 	RoleBleeder   Role = "bleeder"
 	RoleSurge     Role = "surge resistor"

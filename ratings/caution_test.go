@@ -118,7 +118,7 @@ func TestCautionThresholds(t *testing.T) {
 		{"stored-charge", Hazard{OutputV: 4501, OutputC: 10e-9}, true},
 		{"stored-charge", Hazard{OutputV: 60, OutputC: 1}, false},
 		{"stored-charge", Hazard{OutputV: 61, OutputC: 1}, true},
-		{"stored-charge", Hazard{OutputV: 15e3, OutputC: 4e-9, StoredJ: 1}, true},      // 60 µC
+		{"stored-charge", Hazard{OutputV: 15e3, OutputC: 4e-9, StoredJ: 0.1}, true},    // 60 µC
 		{"stored-charge", Hazard{OutputV: 15001, OutputC: 4e-9, StoredJ: 0.35}, false}, // energy counts above 15 kV
 		{"stored-charge", Hazard{OutputV: 15001, OutputC: 4e-9, StoredJ: 0.351}, true},
 		{"charged-capacitor", Hazard{OutputV: 1000, OutputC: 4e-9}, false},
@@ -238,6 +238,11 @@ func TestCautionsShowTheirFigures(t *testing.T) {
 	for joules, arc := range map[float64]bool{100: false, 101: true} {
 		if c := caution(t, Hazard{OutputV: 50, StoredJ: joules}, "burn"); strings.Contains(c.Text, "arc") != arc {
 			t.Errorf("%v J: got %q", joules, c.Text)
+		}
+	}
+	for seconds, want := range map[float64]string{0: "Wait until", 0.5: "at least 500 ms", 7.256: "at least 7.26 s", math.NaN(): "Wait until"} {
+		if c := caution(t, Hazard{OutputV: 600, HasBleeder: true, DischargeS: seconds}, "work-inside"); !strings.Contains(c.Text, want) {
+			t.Errorf("%v s: got %q", seconds, c.Text)
 		}
 	}
 	if c := caution(t, Hazard{OutputV: 600, HasBleeder: true, DischargeS: math.Inf(1)}, "work-inside"); strings.Contains(c.Text, "∞") {

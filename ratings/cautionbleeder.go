@@ -49,7 +49,7 @@ func bleederFault(h Hazard) (Caution, bool) {
 func bleederSharing(h Hazard) (Caution, bool) {
 	return Caution{
 		Title:  fmt.Sprintf("the bleeder's %d resistors share %s", h.BleederParts, volts(h.OutputV)),
-		Text:   fmt.Sprintf("Each sees %s, and the tolerance more: take resistors of one value, make and batch, each rated for its working voltage, with spacing along the string for the whole.", volts(h.OutputV/float64(max(1, h.BleederParts)))),
+		Text:   fmt.Sprintf("Each sees %s, and the tolerance more: take resistors of one value, make and batch, each rated for its working voltage, with spacing along the string for the whole.", volts(h.OutputV/float64(h.BleederParts))),
 		Source: fromTrade,
 	}, h.OutputV > TouchLimitV && h.HasBleeder && h.BleederParts > 1
 }

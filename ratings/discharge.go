@@ -10,7 +10,7 @@ func DischargeTime(volts, limit, ohms, farads float64) float64 {
 	switch {
 	case volts <= limit || farads == 0:
 		return 0
-	case ohms <= 0 || limit == 0:
+	case ohms <= 0:
 		return math.Inf(1)
 	}
 	return ohms * farads * math.Log(volts/limit)
@@ -20,7 +20,7 @@ func DischargeTime(volts, limit, ohms, farads float64) float64 {
 // voltage to a limit within a time; infinite when it is there already.
 func BleederFor(volts, limit, farads, seconds float64) float64 {
 	volts, limit = math.Abs(volts), math.Abs(limit)
-	if volts <= limit || farads == 0 {
+	if volts <= limit {
 		return math.Inf(1)
 	}
 	return seconds / (farads * math.Log(volts/limit))

@@ -63,6 +63,22 @@ func TestFilmResistorRate(t *testing.T) {
 	}
 }
 
+// Away from the points where a factor is 1 or 2, by hand: the voltage factor
+// at half of 0.6 is 0.5³+1 or 0.5⁵+1, 0.01^0.09 = 0.660693, 0.35 eV at 55 °C
+// makes 3.478655.
+func TestFailureModelExponents(t *testing.T) {
+	for name, c := range map[string]struct{ got, want float64 }{
+		"ceramic":   {CeramicModel.Rate(25, 1e-6, 0.3, 1, GroundBenign), 0.00099 * 1.125},
+		"film":      {FilmModel.Rate(25, 10e-9, 0.3, 1, GroundBenign), 0.00051 * 0.660693448 * 1.03125},
+		"aluminium": {AluminiumModel.Rate(55, 1e-6, 0.3, 1, GroundBenign), 0.00012 * 3.478655462 * 1.03125},
+		"plastic":   {DiodeRate(RateGeneral, 25, 1, QualityPlastic, GroundBenign), 0.0038 * 8},
+	} {
+		if !near(c.got, c.want) {
+			t.Errorf("%s: got %v, want %v", name, c.got, c.want)
+		}
+	}
+}
+
 func TestFailureTablesFromMemory(t *testing.T) {
 	for name, c := range map[string]struct{ got, want float64 }{
 		"rectifier": {RateRectifier, 0.0030}, "fast": {RateFastRectifier, 0.0690}, "switching": {RateSwitching, 0.0010}, "general": {RateGeneral, 0.0038},
@@ -94,7 +110,7 @@ func TestFailureRateOfPart(t *testing.T) {
 		{"fast", diode(withoutLeakage), DiodeRate(0.069, 45, 0.5, 8, GroundFixed)},
 		{"standard", diode(func(d *catalog.Diode) { d.Type = catalog.Standard; withoutLeakage(d) }), DiodeRate(0.003, 45, 0.5, 8, GroundFixed)},
 		{"schottky", diode(func(d *catalog.Diode) { d.Type = catalog.Schottky; withoutLeakage(d) }), DiodeRate(0.003, 45, 0.5, 8, GroundFixed)},
-		{"resistor", resistor(nil), FilmResistorRate(45, 0.5, 0.5, 10, GroundFixed)},
+		{"resistor", resistor(func(_ *catalog.Part, r *catalog.Resistor) { r.Power = 2 }), FilmResistorRate(45, 0.5, 0.25, 10, GroundFixed)},
 	} {
 		half := u
 		half.PeakV, half.InverseV, half.PowerW = u.PeakV/2, u.InverseV/2, u.PowerW/2

@@ -33,7 +33,9 @@ func TestClearanceBetweenAndBeyondTheRows(t *testing.T) {
 		want      float64
 		within    bool
 	}{
-		{5500, 1, 2000, 4.75, true},   // halfway from 4 to 5.5 mm
+		{5500, 1, 2000, 4.75, true}, // halfway from 4 to 5.5 mm
+		{365, 1, 0, 0.015, true},    // halfway from 0.01 to 0.02 mm
+		{330, 1, 0, 0.01, true},
 		{0, 1, 0, 0.01, true},         // below the first row
 		{500, 2, 0, 0.2, true},        // degree 2 not below 0.2 mm
 		{1200, 2, 0, 0.25, true},      // above that the table counts
@@ -90,6 +92,7 @@ func TestCreepageByGroupAndPollution(t *testing.T) {
 		want      float64
 	}{
 		{1000, 2, GroupI, 5}, {1000, 2, GroupII, 7}, {1000, 1, GroupIIIa, 10}, {1000, 3, GroupIIIa, 16}, {1000, 4, GroupI, 8},
+		{200.5, 2, GroupI, 1.0025},                // 2.005 mm halved
 		{200, 2, GroupI, 2}, {200, 2, GroupII, 2}, // no less up to 200 V
 	} {
 		if got, _ := Creepage(c.volts, c.pollution, c.group); !cmp.Equal(got, c.want, closely) {

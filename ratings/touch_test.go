@@ -42,13 +42,17 @@ func TestDischargeTime(t *testing.T) {
 	}
 	for name, c := range map[string]struct{ got, want float64 }{
 		"at the limit":          {DischargeTime(60, 60, 1e6, 1e-6), 0},
+		"below the limit":       {DischargeTime(30, 60, 1e6, 1e-6), 0},
+		"nothing, no bleeder":   {DischargeTime(600, 0, 0, 0), 0},
+		"a small one":           {DischargeTime(60*math.E, 60, 0.5, 1), 0.5},
+		"none below the limit":  {BleederFor(30, 60, 1e-6, 1), math.Inf(1)},
 		"nothing stored":        {DischargeTime(600, 60, 1e6, 0), 0},
 		"no bleeder":            {DischargeTime(600, 60, 0, 1e-6), math.Inf(1)},
 		"no limit":              {DischargeTime(600, 0, 1e6, 1e-6), math.Inf(1)},
 		"any bleeder does":      {BleederFor(60, 60, 1e-6, 1), math.Inf(1)},
 		"any does, none stored": {BleederFor(600, 60, 0, 1), math.Inf(1)},
 	} {
-		if c.got != c.want {
+		if !near(c.got, c.want) {
 			t.Errorf("%s: got %v, want %v", name, c.got, c.want)
 		}
 	}

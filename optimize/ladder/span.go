@@ -39,11 +39,20 @@ func (r *runner) span(ctx context.Context, until, longest, tolerance float64, ea
 	return nil
 }
 
-// stand puts the integrator on a state at t = 0.
+// stand puts the integrator on a state at t = 0, which a switch may have made
+// inconsistent: a vanishing step of the implicit Euler rule moves no charge
+// that counts and lets what follows at once, such as a node behind resistances
+// alone, jump to where it belongs.
 func (r *runner) stand(x []float64) {
 	copy(r.st.start.x, x)
 	r.st.start.x[r.s.n] = 0
 	r.st.start.t = 0
 	clear(r.st.rate)
 	r.s.evaluate(r.st.start)
+	st := r.st
+	copy(st.past, st.start.q)
+	st.mid.copyFrom(st.start)
+	if st.newton(st.mid, 1e-9*r.s.period) {
+		st.start, st.mid = st.mid, st.start
+	}
 }

@@ -19,12 +19,17 @@ type label struct {
 
 // combine goes through the lines and keeps the labels that can still meet the
 // aims and that no other label beats. It updates the best answer; all is false
-// when labels had to be dropped.
+// when there were too many.
 func (r *reacher) combine(aims []aim, lists [][]option, window int64, room float64) (all bool) {
+	if slices.ContainsFunc(lists, func(list []option) bool { return len(list) == 0 }) {
+		return true // a line has nothing that could do better
+	}
 	ups, downs := outlook(aims, lists)
 	labels := []*label{{raises: make([]int64, len(aims))}}
-	all = true
 	for i, list := range lists {
+		if r.work += len(labels) * len(list); r.work > mostWork || len(labels) > mostLabels {
+			return false
+		}
 		var next []*label
 		for _, from := range labels {
 			for k := range list {
@@ -34,14 +39,11 @@ func (r *reacher) combine(aims []aim, lists [][]option, window int64, room float
 			}
 		}
 		labels = unbeaten(next)
-		if len(labels) > mostLabels {
-			labels, all = labels[:mostLabels], false
-		}
 	}
 	if len(labels) > 0 {
 		r.take(labels[0])
 	}
-	return all
+	return true
 }
 
 func step(from *label, o *option) *label {
@@ -117,13 +119,7 @@ func (r *reacher) take(l *label) {
 	for i := len(ways) - 1; i >= 0; i-- {
 		ways[i], l = l.way, l.from
 	}
-	var cost int64
-	for _, w := range ways {
-		cost += w.cost
-	}
-	if cost += r.chargesOf(r.goodsOf(ways)); cost < r.best.cost {
-		*r.best = answer{cost: cost, ways: ways}
-	}
+	r.keep(ways)
 }
 
 // efficient drops options that another beats or equals in cost and every aim,

@@ -6,7 +6,8 @@ import (
 	"slices"
 )
 
-// mostTries bounds the work of one hunt.
+// mostTries bounds the work of one hunt; a hundred times that where a line's
+// own best covers are sought.
 const mostTries = 20000
 
 // hunt goes through the covers of a line by a set of suppliers, over all
@@ -21,17 +22,23 @@ type hunt struct {
 	factors []float64 // beside sources: cost counted per minor unit
 	limit   float64
 	found   func(cost float64, picks []pick)
+	further float64 // what a second purchase for the line counts, and any more
 
 	padding uint32  // suppliers from which more than needed may be bought
 	ceiling float64 // then: the weighed cost must stay below this
+	most    int     // purchases at most
+	all     bool    // every supplier of the set must be used
+	budget  int     // tries at most
 	tried   int
 	picks   []pick
+	last    []bool    // beside sources: no later source is of the same supplier
+	fills   []filling // scratch, two for each depth
 }
 
 // newHunt takes the sources of a set, the dearest first, so that the bound
 // rises early. discounts are by supplier; nil for none.
 func newHunt(l *line, m *Market, set uint32, discounts []float64) *hunt {
-	h := &hunt{line: l, market: m, ceiling: math.Inf(1)}
+	h := &hunt{line: l, market: m, ceiling: math.Inf(1), budget: mostTries, most: l.most, further: splitCost * float64(l.unit)}
 	for i := range l.offers {
 		if s := &l.offers[i]; set&(1<<s.bidder) != 0 {
 			h.sources = append(h.sources, s)
@@ -46,9 +53,11 @@ func newHunt(l *line, m *Market, set uint32, discounts []float64) *hunt {
 	slices.SortStableFunc(h.sources, func(a, b *source) int {
 		return cmp.Compare(b.floor(l.pieces)*factor(b), a.floor(l.pieces)*factor(a))
 	})
-	for _, s := range h.sources {
+	for i, s := range h.sources {
 		h.factors = append(h.factors, factor(s))
+		h.last = append(h.last, !slices.ContainsFunc(h.sources[i+1:], func(t *source) bool { return t.bidder == s.bidder }))
 	}
+	h.fills = make([]filling, 2*len(h.sources)+3)
 	return h
 }
 
@@ -57,7 +66,7 @@ func (h *hunt) run() { h.from(0, h.line.pieces, 0, 0) }
 // from covers what remains with the sources i and later; weighed is the cost
 // without discounts.
 func (h *hunt) from(i, remain int, cost, weighed float64) {
-	if h.tried++; h.tried > mostTries {
+	if h.tried++; h.tried > h.budget {
 		return
 	}
 	for remain <= 0 && i < len(h.sources) && h.padding&(1<<h.sources[i].bidder) == 0 {
@@ -69,18 +78,63 @@ func (h *hunt) from(i, remain int, cost, weighed float64) {
 		}
 		return
 	}
-	if remain > 0 && cost+h.rest(i, remain).cover(remain) >= h.limit {
+	if len(h.picks) == h.most && remain > 0 {
 		return
 	}
-	h.from(i+1, remain, cost, weighed)
-	rest := h.rest(i+1, max(1, remain))
+	if remain > 0 {
+		bound := h.rest(&h.fills[2*i], i, remain)
+		low := cost + bound.cover(remain)
+		if len(h.picks) == 0 { // later, a further purchase's cost outweighs what rounding takes off
+			low -= bound.slack
+		}
+		if low+h.due(i)*h.further >= h.limit {
+			return
+		}
+	}
+	if !h.all || !h.last[i] || h.used(h.sources[i].bidder) {
+		h.from(i+1, remain, cost, weighed)
+	}
+	if len(h.picks) == h.most {
+		return
+	}
+	rest := h.rest(&h.fills[2*i+1], i+1, max(1, remain))
+	if len(h.picks) == h.most-1 {
+		rest.close()
+	}
 	for t := range h.sources[i].tiers {
 		h.tier(i, t, remain, cost, weighed, rest)
 	}
 }
 
+// due is how many purchases beyond one must still come because every supplier
+// of the set is to be used.
+func (h *hunt) due(i int) float64 {
+	if !h.all {
+		return 0
+	}
+	n := -1
+	for k := i; k < len(h.sources); k++ {
+		if h.last[k] && !h.used(h.sources[k].bidder) {
+			n++
+		}
+	}
+	if len(h.picks) > 0 {
+		n++
+	}
+	return float64(max(0, n))
+}
+
+func (h *hunt) used(bidder int) bool {
+	for _, p := range h.picks {
+		if p.source.bidder == bidder {
+			return true
+		}
+	}
+	return false
+}
+
 // tier tries the quantities of one price break that can stay below the limit.
-func (h *hunt) tier(i, t, remain int, cost, weighed float64, rest filling) {
+func (h *hunt) tier(i, t, remain int, cost, weighed float64, rest *filling) {
 	s := h.sources[i]
 	first, last := h.span(i, t, remain)
 	step := max(1, s.offer.Multiple)
@@ -90,23 +144,27 @@ func (h *hunt) tier(i, t, remain int, cost, weighed float64, rest filling) {
 	if first > last {
 		return
 	}
+	further := 0.0
+	if len(h.picks) > 0 {
+		further = h.further
+	}
 	bound := func(k int) float64 {
 		q := first + k*step
-		return cost + h.factors[i]*(s.tiers[t].unit*float64(q)-s.slack) + rest.cover(remain-q)
+		return cost + further + h.factors[i]*(s.tiers[t].unit*float64(q)-s.slack) + rest.cover(remain-q)
 	}
 	low, high := below(bound, (last-first)/step, func() float64 { return h.limit })
-	for k := low; k <= high && h.tried <= mostTries; k++ {
+	for k := low; k <= high && h.tried <= h.budget; k++ {
 		q := first + k*step
 		quoted, ok := h.market.exactly(s.offer, q)
 		minor := float64(quoted.minor)
-		if !ok || weighed+minor*float64(s.weight) >= h.ceiling {
+		if !ok || weighed+further+minor*float64(s.weight) >= h.ceiling {
 			return
 		}
 		if bound(k) >= h.limit { // it may have fallen meanwhile
 			continue
 		}
 		h.picks = append(h.picks, pick{s, q, quoted.minor})
-		h.from(i+1, remain-q, cost+minor*h.factors[i], weighed+minor*float64(s.weight))
+		h.from(i+1, remain-q, cost+further+minor*h.factors[i], weighed+further+minor*float64(s.weight))
 		h.picks = h.picks[:len(h.picks)-1]
 	}
 }
@@ -176,8 +234,9 @@ type filling struct {
 	slack float64
 }
 
-func (h *hunt) rest(i, remain int) filling {
-	var f filling
+// rest fills in f for the sources i and later.
+func (h *hunt) rest(f *filling, i, remain int) *filling {
+	f.units, f.caps, f.most, f.slack = f.units[:0], f.caps[:0], 0, 0
 	for ; i < len(h.sources); i++ {
 		s := h.sources[i]
 		unit := s.floor(remain) * h.factors[i]
@@ -187,18 +246,18 @@ func (h *hunt) rest(i, remain int) filling {
 			f.units[k], f.caps[k], f.units[k-1], f.caps[k-1] = f.units[k-1], f.caps[k-1], unit, s.most
 		}
 		f.most = min(unlimited/2, f.most+s.most)
-		f.slack += s.slack * h.factors[i]
+		f.slack = max(f.slack, s.slack*h.factors[i])
 	}
 	return f
 }
 
 // cover is the least that so many pieces can cost; infinite beyond what there
 // is.
-func (f filling) cover(pieces int) float64 {
+func (f *filling) cover(pieces int) float64 {
 	if pieces <= 0 {
 		return 0
 	}
-	sum := -f.slack
+	sum := 0.0
 	for k, unit := range f.units {
 		n := min(pieces, f.caps[k])
 		sum += unit * float64(n)
@@ -208,6 +267,9 @@ func (f filling) cover(pieces int) float64 {
 	}
 	return math.Inf(1)
 }
+
+// close leaves nothing to the others: this purchase is the last.
+func (f *filling) close() { f.units, f.caps, f.most = f.units[:0], f.caps[:0], 0 }
 
 // floor is the lowest price in minor units at which the offer covers each of
 // at most so many pieces: a tier that starts above them is paid in full.

@@ -42,12 +42,13 @@ type level struct{ from, charge int64 }
 
 // solver holds one question.
 type solver struct {
-	market    *Market
-	bidders   []bidder
-	lines     []*line
-	unserved  []Unserved
-	needs     []Need
-	truncated bool // suppliers or splits were left out
+	market   *Market
+	bidders  []bidder
+	lines    []*line
+	unserved []Unserved
+	needs    []Need
+	leftOut  []string // suppliers beyond MostBidders
+	work     int
 }
 
 func newSolver(needs []Need, suppliers []catalog.Supplier, terms Terms) (*solver, error) {
@@ -108,7 +109,7 @@ func (s *solver) addBidders(suppliers []catalog.Supplier) {
 	}
 	slices.SortFunc(names, func(a, b string) int { return cmp.Or(serves[b]-serves[a], strings.Compare(a, b)) })
 	if len(names) > MostBidders {
-		names, s.truncated = names[:MostBidders], true
+		names, s.leftOut = names[:MostBidders], slices.Sorted(slices.Values(names[MostBidders:]))
 	}
 	slices.Sort(names)
 	for _, name := range names {
@@ -116,6 +117,14 @@ func (s *solver) addBidders(suppliers []catalog.Supplier) {
 		v.Name = name
 		s.bidders = append(s.bidders, bidder{Supplier: v, weight: s.weight(name), levels: s.levels(v)})
 	}
+}
+
+// unit is the weight that leaves a cost as it is.
+func (s *solver) unit() int64 {
+	if len(s.market.terms.Preferred) == 0 {
+		return 1
+	}
+	return 10000
 }
 
 // weight is 1 for all while no supplier is preferred, which keeps sums small.
@@ -145,7 +154,7 @@ func (s *solver) levels(v catalog.Supplier) []level {
 
 // addLine makes a need ready, or notes why it cannot be served.
 func (s *solver) addLine(n Need) {
-	l := &line{need: n, pieces: n.Net()}
+	l := &line{need: n, pieces: n.Net(), unit: s.unit()}
 	for i := range n.Part.Offers {
 		offer := &n.Part.Offers[i]
 		place := slices.IndexFunc(s.bidders, func(b bidder) bool { return b.Name == offer.Supplier })
@@ -157,9 +166,7 @@ func (s *solver) addLine(n Need) {
 			l.offers = append(l.offers, src)
 		}
 	}
-	if !l.findWays(s.market, len(s.bidders)) {
-		s.truncated = true
-	}
+	l.findWays(s.market, len(s.bidders))
 	if l.least[len(l.least)-1] >= never {
 		s.unserved = append(s.unserved, Unserved{n, s.why(l)})
 		return
@@ -233,13 +240,12 @@ type answer struct {
 
 // plan turns an answer into orders.
 func (s *solver) plan(a answer) *Plan {
-	p := &Plan{Currency: s.market.Currency, Unserved: s.unserved, Proved: a.bound >= a.cost && !s.truncated}
-	if a.cost > a.bound {
-		p.Slack = s.market.Amount(a.cost - a.bound)
-		if s.bidders[0].weight != 1 {
-			p.Slack = s.market.Amount((a.cost - a.bound + 9999) / 10000)
-		}
+	gap := a.cost - a.bound
+	for _, l := range s.lines {
+		gap += l.doubt
 	}
+	p := &Plan{Currency: s.market.Currency, Unserved: s.unserved, LeftOut: s.leftOut, Proved: gap == 0 && len(s.leftOut) == 0,
+		Slack: s.market.Amount((gap + s.unit() - 1) / s.unit())}
 	orders := make([]SupplierOrder, len(s.bidders))
 	goods := make([]int64, len(s.bidders))
 	served := 0

@@ -25,6 +25,7 @@ type Plan struct {
 	Charges  decimal.Decimal
 	Total    decimal.Decimal
 	Unserved []Unserved      // needs that nobody can deliver; the sums leave them out
+	LeftOut  []string        // suppliers that were not weighed, being too many
 	Proved   bool            // nothing cheaper exists, whatever the quantities
 	Slack    decimal.Decimal // when not proved: how far below Total the least could lie
 }

@@ -1,5 +1,11 @@
 package order
 
+import "math"
+
+// mostWork bounds the steps for one plan, so that it takes a second or so at
+// worst; beyond, the plan tells how far below it the least could lie.
+const mostWork = 2_000_000
+
 // reacher looks for answers that reach suppliers' thresholds on purpose:
 // lines moved to a dearer offer, or more pieces bought than needed, because
 // the charge saved is worth more.
@@ -10,6 +16,7 @@ type reacher struct {
 	goods     []int64 // of the base
 	best      *answer
 	unsettled int64
+	columns   [][]way // by line: covers that prices have brought up
 }
 
 // aim is a threshold that the goods of a supplier must reach.
@@ -26,6 +33,10 @@ func (r *reacher) choose(i int, cost int64, aims []aim, values []float64) {
 		return
 	}
 	if r.wantsMore(aims) {
+		if r.work > mostWork {
+			r.unsettled = min(r.unsettled, cost)
+			return
+		}
 		p := r.priceOf(aims, values)
 		values = p.values
 		if float64(cost)+p.bound > float64(r.best.cost)-0.5 {
@@ -63,13 +74,37 @@ func (r *reacher) wantsMore(aims []aim) bool {
 }
 
 // reach finds the cheapest change of ways that meets all aims, by building
-// partial answers line after line and keeping those that nothing beats.
+// partial answers line after line. A change loses something against the bound;
+// the loss allowed starts small and grows until an answer is found within it,
+// or none can beat the best.
 func (r *reacher) reach(cost int64, aims []aim, p price) {
-	room := float64(r.best.cost-cost) - 0.5 - p.bound // what a change may lose against the bound
-	lists, complete := r.lists(aims, p, room, r.best.cost-cost)
-	if all := r.combine(aims, lists, r.best.cost-cost, room); !all || !complete || !p.complete {
-		r.unsettled = min(r.unsettled, cost+int64(p.bound))
+	sure := p.bound // nothing below this is left unseen
+	for room := 4 * float64(r.lines[0].unit); ; room *= 3 {
+		left := float64(r.best.cost-cost) - 0.5 - p.bound
+		if left < 0 || p.bound+left < sure {
+			return
+		}
+		room = min(room, left)
+		lists, complete := r.lists(aims, p, room, r.best.cost-cost)
+		r.tryMenus(aims, lists, p.values)
+		if all := r.combine(aims, lists, r.best.cost-cost, room); !all || !complete {
+			r.unsettled = min(r.unsettled, cost+int64(math.Floor(sure)))
+			return
+		}
+		if sure = p.bound + room; room >= left {
+			return
+		}
 	}
+}
+
+// tryMenus looks for an answer among the options of the lists.
+func (r *reacher) tryMenus(aims []aim, lists [][]option, values []float64) {
+	menus := make([]menu, len(lists))
+	for i, list := range lists {
+		menus[i] = append(menu{r.option(r.base[i], r.base[i], aims)}, list...)
+	}
+	_, missed, chosen := r.relaxed(aims, menus, values)
+	r.tryOut(menus, chosen, missed)
 }
 
 // option is a way for a line in place of its base: what it adds in cost,
@@ -101,13 +136,14 @@ func (r *reacher) lists(aims []aim, p price, room float64, window int64) (lists 
 			h.padding |= 1 << a.bidder
 		}
 		h.found = func(cost float64, picks []pick) {
-			w := newWay(picks)
+			w := newWay(picks, l.unit)
 			o := r.option(&w, r.base[i], aims)
 			o.loss = cost - p.least[i]
 			list = append(list, o)
 		}
 		h.run()
-		complete = complete && h.tried <= mostTries
+		r.work += h.tried
+		complete = complete && h.tried <= h.budget
 		lists = append(lists, efficient(list))
 	}
 	return lists, complete

@@ -78,7 +78,7 @@ func (s *solver) settle(c candidate, best *answer) (unsettled int64) {
 	if best.cost <= c.bound {
 		return never
 	}
-	r := reacher{solver: s, candidate: c, base: ways, goods: goods, best: best, unsettled: never}
+	r := reacher{solver: s, candidate: c, base: ways, goods: goods, best: best, unsettled: never, columns: make([][]way, len(s.lines))}
 	r.choose(0, c.goods, nil, nil)
 	return r.unsettled
 }

@@ -11,11 +11,14 @@ import (
 // line is one need with the offers that may serve it.
 type line struct {
 	need    Need
-	pieces  int // to buy
+	pieces  int   // to buy
+	most    int   // purchases that it may be split into
+	unit    int64 // weighed cost of one minor unit: 1, or 10000 when suppliers are preferred
 	offers  []source
 	ways    []way
 	least   []int64 // by set of suppliers: the cost of the cheapest way within it
 	best    []int32 // that way's place, -1 for none
+	doubt   int64   // how far below least a cover could lie where the work ran over
 	corners []way   // single purchases at the need and at every break above
 }
 
@@ -52,12 +55,18 @@ type way struct {
 // never is the cost of what cannot be had.
 const never = math.MaxInt64 / 4
 
-func newWay(picks []pick) way {
+// splitCost is what each further purchase for a line must save, in minor
+// units: nobody splits an order for less, and it outweighs what luck in
+// rounding could gain, which keeps the search small.
+const splitCost = 2
+
+func newWay(picks []pick, unit int64) way {
 	w := way{picks: slices.Clone(picks)}
 	for _, p := range picks {
 		w.set |= 1 << p.source.bidder
 		w.cost += p.minor * p.source.weight
 	}
+	w.cost += splitCost * unit * int64(len(picks)-1)
 	return w
 }
 
@@ -71,14 +80,24 @@ func (w *way) goodsAt(bidder int) int64 {
 	return sum
 }
 
+// mostPurchases is how many offers a line is split over, unless nothing less
+// covers it: nobody wants to count in five bags for a cent.
+const mostPurchases = 3
+
 // findWays fills in the cheapest cover within every set of suppliers, over
-// all whole quantities, single purchases and splits alike. It is false when
-// the work for some set ran over.
-func (l *line) findWays(m *Market, bidders int) (complete bool) {
+// all whole quantities, single purchases and splits alike.
+func (l *line) findWays(m *Market, bidders int) {
 	l.findCorners(m)
+	l.most = mostPurchases
+	if l.tabulate(m, bidders); l.least[len(l.least)-1] >= never && len(l.offers) > l.most {
+		l.most = len(l.offers)
+		l.tabulate(m, bidders)
+	}
+}
+
+func (l *line) tabulate(m *Market, bidders int) {
 	mine := l.bidders()
 	least, best := make([]int64, 1<<len(mine)), make([]int32, 1<<len(mine))
-	complete = true
 	for local := range least { // every set after those within it
 		least[local], best[local] = never, -1
 		for rest := uint(local); rest != 0; rest &= rest - 1 {
@@ -86,16 +105,12 @@ func (l *line) findWays(m *Market, bidders int) (complete bool) {
 				least[local], best[local] = least[sub], best[sub]
 			}
 		}
-		set := global(uint32(local), mine)
-		found, all := l.better(m, set, least[local])
-		complete = complete && all
-		if found != nil {
+		if found := l.better(m, global(uint32(local), mine), least[local]); found != nil {
 			l.ways = append(l.ways, *found)
 			least[local], best[local] = found.cost, int32(len(l.ways)-1)
 		}
 	}
 	l.spread(least, best, mine, bidders)
-	return complete
 }
 
 // bidders lists the suppliers of a line's offers.
@@ -138,26 +153,34 @@ func (l *line) findCorners(m *Market) {
 		for _, t := range s.tiers {
 			q := Orderable(s.offer, max(l.pieces, t.first))
 			if quoted, ok := m.exactly(s.offer, q); ok && q <= s.most {
-				l.corners = append(l.corners, newWay([]pick{{s, q, quoted.minor}}))
+				l.corners = append(l.corners, newWay([]pick{{s, q, quoted.minor}}, l.unit))
 			}
 		}
 	}
 }
 
-// better is a cover by a set of suppliers that costs less than beat, the
-// cheapest there is; nil when there is none.
-func (l *line) better(m *Market, set uint32, beat int64) (found *way, complete bool) {
+// better is a cover by all of a set of suppliers, or one of them alone, that
+// costs less than beat, the cheapest there is; nil when there is none.
+func (l *line) better(m *Market, set uint32, beat int64) (found *way) {
 	for i := range l.corners {
 		if w := &l.corners[i]; w.set&^set == 0 && w.cost < beat {
 			found, beat = w, w.cost
 		}
 	}
+	suppliers := bits.OnesCount32(set)
+	if suppliers > l.most || suppliers == 1 && len(l.offers) == len(l.bidders()) {
+		return found // nothing to split over
+	}
 	h := newHunt(l, m, set, nil)
+	h.all, h.budget = true, 100*mostTries
 	h.limit = float64(beat) - 0.5 // whole numbers: less by one at least
 	h.found = func(_ float64, picks []pick) {
-		w := newWay(picks)
+		w := newWay(picks, l.unit)
 		found, h.limit = &w, float64(w.cost)-0.5
 	}
-	h.run()
-	return found, h.tried <= mostTries
+	if h.run(); h.tried > h.budget && h.limit < never/2 {
+		f := h.rest(&h.fills[0], 0, l.pieces)
+		l.doubt = max(l.doubt, int64(h.limit+1.5-f.cover(l.pieces)+f.slack))
+	}
+	return found
 }
