@@ -76,7 +76,7 @@ func (e *InputError) Unwrap() error { return e.Err }
 const batch = 4
 
 // furthest is how many more simulations the search for runners-up may take.
-const furthest = 48
+const furthest = 12
 
 // walk is one search under way.
 type walk struct {

@@ -4,6 +4,7 @@ import (
 	"math"
 	"slices"
 
+	"rungwright/catalog/quantity"
 	"rungwright/optimize/ladder"
 	"rungwright/ratings"
 )
@@ -167,13 +168,13 @@ func (e *evaluator) sift(c *combination) (upTo int, v verdict) {
 		return ofSecond, outOfBound
 	}
 	p := c.plan()
-	if c.last() <= ofSecond && !e.pairMayReach(p) {
+	if c.last() <= ofSecond && c.weak(e, anyDiode, func() bool { return !e.pairMayReach(p) }) {
 		return ofSecond, outOfGuard
 	}
 	if c.last() <= ofDiode {
 		bare := *p
 		bare.Bleeder = Group{}
-		if !e.mayReach(c, &bare) || !e.mayBear(c, &bare, bleederSag) {
+		if c.weak(e, c.at[ofDiode], func() bool { return !e.mayReach(c, &bare) }) || !e.mayBear(c, &bare, bleederSag) {
 			return ofDiode, outOfGuard
 		}
 	}
@@ -182,7 +183,7 @@ func (e *evaluator) sift(c *combination) (upTo int, v verdict) {
 	} else if pair.excludes(p.Bleeder) {
 		return ofBleeder, outOfBound
 	}
-	if c.weakerThanFailed() {
+	if c.weakerThanFailed(e) {
 		return ofBleeder, outOfGuard
 	}
 	f := c.factsOf(true)
@@ -354,22 +355,57 @@ type strength struct {
 	first, second, ohms float64
 }
 
-func (c *combination) strength() strength {
-	first, second := c.groups()
-	s := strength{diode: c.at[ofDiode], first: lowValue(first), second: endless, ohms: math.Inf(1)}
-	if second.Part != nil {
-		s.second = lowValue(second)
-	}
+func (c *combination) strength(e *evaluator) strength {
+	s := c.capacitances(e)
+	s.diode, s.ohms = c.at[ofDiode], math.Inf(1)
 	if g := c.in.lists[ofBleeder][c.at[ofBleeder]].group; g.Part != nil {
 		s.ohms = bleederOhms(g)
 	}
 	return s
 }
 
+// capacitances are the lowest values at the bias that the groups work at.
+func (c *combination) capacitances(e *evaluator) strength {
+	first, second := c.groups()
+	one, two := c.in.levels()
+	crest := float64(e.supply.Source.Peak)
+	s := strength{first: workingValue(first, one*crest), second: endless}
+	if second.Part != nil {
+		s.second = workingValue(second, two*crest)
+	}
+	return s
+}
+
+// workingValue is a group's lowest capacitance at a bias [F].
+func workingValue(g Group, bias float64) float64 {
+	k := g.Part.Capacitor
+	return lowValue(g) * float64(k.CapacitanceAt(quantity.Volts(bias/float64(g.Series)))/k.Capacitance)
+}
+
+// anyDiode stands for diodes better than any.
+const anyDiode = -1
+
+// weak tells whether the capacitors fall short by the estimate with a diode:
+// at once where no more capacitance fell short before, else by asking.
+func (c *combination) weak(e *evaluator, diode int, short func() bool) bool {
+	s := c.capacitances(e)
+	for _, f := range c.in.weak[diode] {
+		if s.first <= f.first && s.second <= f.second {
+			return true
+		}
+	}
+	if !short() {
+		return false
+	}
+	kept := slices.DeleteFunc(c.in.weak[diode], func(f strength) bool { return f.first <= s.first && f.second <= s.second })
+	c.in.weak[diode] = append(kept, s)
+	return true
+}
+
 // weakerThanFailed tells whether a simulated combination of the region fell
 // short with the same diode, no less capacitance and no heavier bleeder.
-func (c *combination) weakerThanFailed() bool {
-	s := c.strength()
+func (c *combination) weakerThanFailed(e *evaluator) bool {
+	s := c.strength(e)
 	for _, f := range c.in.failed {
 		if f.diode == s.diode && s.first <= f.first && s.second <= f.second && s.ohms <= f.ohms {
 			return true
@@ -385,7 +421,7 @@ func (e *evaluator) learn(c *combination, t *trial) {
 		c.factsOf(false).dead = true
 	}
 	if t.side == shortfall {
-		c.in.failed = append(c.in.failed, c.strength())
+		c.in.failed = append(c.in.failed, c.strength(e))
 	}
 	if t.plan.Bleeder.Part == nil || len(t.failed) == 0 {
 		return

@@ -25,8 +25,9 @@ type region struct {
 	guarded  int64        // by the estimate with its guard
 	short    [][2]float64 // capacitances with which the ladder cannot reach the output
 	facts    map[[3]int]*facts
-	failed   []strength  // simulated and fallen short
-	stress   *stressSeen // of the topology and the stages, shared by their regions
+	weak     map[int][]strength // fallen short by the estimate, by diode
+	failed   []strength         // simulated and fallen short
+	stress   *stressSeen        // of the topology and the stages, shared by their regions
 }
 
 // kinds of option in a region's lists.
@@ -194,7 +195,7 @@ func (r region) closed(hopeless bool) *region {
 	if hopeless {
 		r.lists = [4][]option{}
 	}
-	r.facts = map[[3]int]*facts{}
+	r.facts, r.weak = map[[3]int]*facts{}, map[int][]strength{}
 	r.dropped = r.total - r.size()
 	return &r
 }

@@ -23,6 +23,7 @@ type progress struct {
 	drawn    time.Time // last time the line was drawn; zero: never
 	phase    string
 	phaseAt  time.Time
+	before   int64 // done when the phase was first seen: most of a search is settled at once
 	currency string
 }
 
@@ -47,7 +48,7 @@ func (p *progress) update(state optimize.Progress) {
 	defer p.mu.Unlock()
 	now := p.now()
 	if state.Phase != p.phase {
-		p.phase, p.phaseAt = state.Phase, now
+		p.phase, p.phaseAt, p.before = state.Phase, now, state.Done
 	}
 	if now.Sub(p.began) < progressAfter || now.Sub(p.drawn) < redrawEvery {
 		return
@@ -60,8 +61,8 @@ func (p *progress) update(state optimize.Progress) {
 	fmt.Fprintf(p.out, "\r\x1b[K%s", string(line))
 }
 
-// line says what is done, how much of it, what is known so far and the time
-// left at most: a search ends early when its answer is found.
+// line says what is done, how much of it, what is known so far and about how
+// long the rest would take; a search ends earlier when its answer is found.
 func (p *progress) line(state optimize.Progress, spent time.Duration) string {
 	text := state.Phase
 	if state.Total > 0 {
@@ -69,23 +70,23 @@ func (p *progress) line(state optimize.Progress, spent time.Duration) string {
 	}
 	switch {
 	case state.HasBest:
-		text += fmt.Sprintf(", best %s %s", state.BestCost.StringFixed(2), p.currency)
+		text += fmt.Sprintf(", best %s %s for the build", state.BestCost.StringFixed(2), p.currency)
 	case state.Bound.IsPositive():
-		text += fmt.Sprintf(", none below %s %s", state.Bound.StringFixed(2), p.currency)
+		text += fmt.Sprintf(", none below %s %s for the build", state.Bound.StringFixed(2), p.currency)
 	}
-	if left, ok := timeLeft(state, spent); ok {
-		text += ", at most about " + left.String() + " left"
+	if left, ok := timeLeft(state.Done-p.before, state.Total-p.before, spent); ok {
+		text += ", about " + left.String() + " left"
 	}
 	return text
 }
 
 // timeLeft assumes that the rest goes as fast as what is done; it says
 // nothing before a twentieth is done.
-func timeLeft(state optimize.Progress, spent time.Duration) (time.Duration, bool) {
-	if state.Total <= 0 || state.Done < state.Total/20 || state.Done == 0 || state.Done > state.Total {
+func timeLeft(done, total int64, spent time.Duration) (time.Duration, bool) {
+	if done <= 0 || done < total/20 || done > total {
 		return 0, false
 	}
-	left := time.Duration(float64(spent) * float64(state.Total-state.Done) / float64(state.Done))
+	left := time.Duration(float64(spent) * float64(total-done) / float64(done))
 	return max(left.Round(time.Second), time.Second), true
 }
 

@@ -24,20 +24,20 @@ func state(done int64) optimize.Progress {
 func TestProgressWaitsDrawsAndErases(t *testing.T) {
 	p, c := pretendTerminal(80), &clock{time.Unix(0, 0)}
 	line := newProgress(&p.streams, "EUR", c.now)
-	line.update(state(1))
+	line.update(state(20))
 	c.pass(900 * time.Millisecond)
-	line.update(state(10))
+	line.update(state(25))
 	if p.errText.Len() > 0 {
 		t.Errorf("drawn before a second had passed: %q", p.errText.String())
 	}
 	c.pass(1100 * time.Millisecond)
-	line.update(state(20))
-	want := "\r\x1b[Ksimulating 20 %, best 12.35 EUR, at most about 8s left"
+	line.update(state(30)) // 10 of 80 in 2 s, for 20 were done from the start
+	want := "\r\x1b[Ksimulating 30 %, best 12.35 EUR for the build, about 14s left"
 	if got := p.errText.String(); got != want {
 		t.Errorf("got  %q\nwant %q", got, want)
 	}
 	c.pass(10 * time.Millisecond)
-	line.update(state(21))
+	line.update(state(31))
 	if got := p.errText.String(); got != want {
 		t.Errorf("redrawn after 10 ms: %q", got)
 	}
@@ -45,7 +45,7 @@ func TestProgressWaitsDrawsAndErases(t *testing.T) {
 	if !strings.HasSuffix(p.errText.String(), "\r\x1b[K") {
 		t.Errorf("not erased: %q", p.errText.String())
 	}
-	line.update(state(30))
+	line.update(state(40))
 	if !strings.HasSuffix(p.errText.String(), "\r\x1b[K") {
 		t.Errorf("drawn after its end: %q", p.errText.String())
 	}

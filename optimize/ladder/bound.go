@@ -130,7 +130,7 @@ func (e *estimator) resonance() float64 {
 
 // inputCapacitance is what one winding end charges while no diode conducts.
 func (e *estimator) inputCapacitance() float64 {
-	n, node := &e.net, e.net.ends[0].node
+	n, node := e.net, e.net.ends[0].node
 	sum := 0.0
 	add := func(b branch, c float64) {
 		if b.a == node || b.b == node {

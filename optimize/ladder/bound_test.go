@@ -40,7 +40,7 @@ func broad(r *rand.Rand) Circuit {
 // never broken. It also shows the sharpest cases, so that a bound grown too
 // slack is noticed.
 func TestBoundIsOptimistic(t *testing.T) {
-	trials := heavy(100, 10000)
+	trials := heavy(60, 1200)
 	nearestMean, nearestRipple := math.Inf(1), math.Inf(1)
 	for i := range trials {
 		r := rand.New(rand.NewPCG(3, uint64(i)))

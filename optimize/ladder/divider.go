@@ -1,6 +1,9 @@
 package ladder
 
-import "math"
+import (
+	"math"
+	"sync"
+)
 
 // swings is the alternating amplitude of every node when no diode conducts, for
 // a source of amplitude 1: the capacitive divider of coupling, smoothing,
@@ -37,7 +40,29 @@ func (n *netlist) swings(c *Circuit, dc []float64) []float64 {
 			joints = append(joints, joint{i, size, c.Stray})
 		}
 	}
-	return divide(joints, fixed, driven)[:size]
+	return divide(patternKey{c.Topology, c.Stages, c.Stray > 0}, joints, fixed, driven)[:size]
+}
+
+// patternKey is what the structure of a divider depends on.
+type patternKey struct {
+	topology Topology
+	stages   int
+	stray    bool
+}
+
+// The structures of dividers and netlists, found once: a search asks for the
+// same ones again and again. What they hold is never changed.
+var dividers, netlists sync.Map
+
+// netlistOf is the topology at a number of stages, to be read only.
+func netlistOf(t Topology, stages int) *netlist {
+	key := patternKey{t, stages, false}
+	if n, ok := netlists.Load(key); ok {
+		return n.(*netlist)
+	}
+	n := forms[t].build(stages)
+	netlists.Store(key, &n)
+	return &n
 }
 
 // joint is a capacitance between two nodes of the divider.
@@ -48,7 +73,7 @@ type joint struct {
 
 // divide finds the node voltages of a capacitive network in which some nodes
 // are driven.
-func divide(joints []joint, fixed []float64, driven []bool) []float64 {
+func divide(key patternKey, joints []joint, fixed []float64, driven []bool) []float64 {
 	size := len(fixed) - 1
 	free := make([]int, size+1)
 	count := 0
@@ -63,7 +88,11 @@ func divide(joints []joint, fixed []float64, driven []bool) []float64 {
 	for _, j := range joints {
 		pairs = append(pairs, branch{free[j.a], free[j.b]})
 	}
-	m := newSparse(count, pairs)
+	found, ok := dividers.Load(key)
+	if !ok {
+		found, _ = dividers.LoadOrStore(key, newSparse(count, pairs))
+	}
+	m := found.(*sparse)
 	values := make([]float64, m.size())
 	right := make([]float64, count)
 	for k, j := range joints {

@@ -24,7 +24,7 @@ func Estimate(c Circuit) Estimated {
 // estimator holds what does not depend on the load current.
 type estimator struct {
 	c       Circuit
-	net     netlist
+	net     *netlist
 	crest   float64   // half of the source's swing [V]
 	swing   []float64 // alternating amplitude of each node, for a source of 1
 	noLoad  float64
@@ -37,7 +37,7 @@ type estimator struct {
 }
 
 func newEstimator(c Circuit) *estimator {
-	e := &estimator{c: c, net: forms[c.Topology].build(c.Stages)}
+	e := &estimator{c: c, net: netlistOf(c.Topology, c.Stages)}
 	high, low := c.Source.wave().crests()
 	crest := c.Source.Peak * (high - low) / 2
 	bias := e.net.capacitorLevels(crest)

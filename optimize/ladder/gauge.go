@@ -13,7 +13,6 @@ type gauge struct {
 	out     track
 	load    float64 // ∫ i dt
 	loadJ   float64
-	inputJ  float64
 	resistJ float64
 	leakJ   float64 // leakage of the capacitors
 	caps    []track

@@ -5,7 +5,7 @@ package ladder
 // capacitor changes by a known charge, and at its own crest every diode joins
 // its two nodes; that fixes each node at both crests.
 func (e *estimator) state(load float64) []float64 {
-	n := &e.net
+	n := e.net
 	share := max(0.05, 1-e.conduction(load)/e.noLoad) * e.crest // what the diodes and resistances leave
 	q := min(e.charge(load), 0.4*share/e.crest*e.noLoad/e.unit) // beyond, the balance says too little
 	still := map[int]float64{}

@@ -68,7 +68,7 @@ func wild(r *rand.Rand) Circuit {
 // TestEveryCircuitIsAnswered solves circuits that no bench would build and
 // demands a finite steady state or a reason, in bounded work, for each.
 func TestEveryCircuitIsAnswered(t *testing.T) {
-	trials, unanswered := heavy(15, 1000), 0
+	trials, unanswered := heavy(12, 200), 0
 	for i := range trials {
 		c := wild(rand.New(rand.NewPCG(1, uint64(i))))
 		s, err := Solve(context.Background(), c, nil)

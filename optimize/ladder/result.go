@@ -17,7 +17,6 @@ type Steady struct {
 	Waves             *Waves        // when asked for
 
 	start []float64 // the state at the start of the period, in the system's numbering
-	mesh  []float64 // the instants that the integrator used
 }
 
 // CapacitorState is one capacitor over the period.

@@ -185,7 +185,6 @@ func (st *stepper) advance() { st.start, st.end = st.end, st.start }
 type sensitivity struct {
 	w               int
 	start, mid, end []float64
-	startC          []float64 // capacitance per element at the start of the step
 }
 
 func newSensitivity(s *system) *sensitivity {

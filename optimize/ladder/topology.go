@@ -58,23 +58,22 @@ func (t Topology) Known() bool { _, ok := forms[t]; return ok }
 
 // OutputFactor is the ideal no-load output in units of the source peak: 2n,
 // or 2n+1 for the odd multiples, 4n across both outputs of a bipolar one.
-func (t Topology) OutputFactor(stages int) int { return len(forms[t].build(stages).climb) }
+func (t Topology) OutputFactor(stages int) int { return len(netlistOf(t, stages).climb) }
 
 // SmoothingColumn tells for each capacitor whether it is one of the smoothing
 // capacitors across which the output stands; the others couple.
-func (t Topology) SmoothingColumn(stages int) []bool { return forms[t].build(stages).smoothing }
+func (t Topology) SmoothingColumn(stages int) []bool { return netlistOf(t, stages).smoothing }
 
 // CapacitorLevels is the ideal no-load voltage of each capacitor in units of
 // the source peak.
 func (t Topology) CapacitorLevels(stages int) []float64 {
-	n := forms[t].build(stages)
-	return n.capacitorLevels(1)
+	return netlistOf(t, stages).capacitorLevels(1)
 }
 
 // FirstCoupling tells for each capacitor whether it is a first coupling
 // capacitor, the one that carries the charge of every stage.
 func (t Topology) FirstCoupling(stages int) []bool {
-	n := forms[t].build(stages)
+	n := netlistOf(t, stages)
 	out := make([]bool, len(n.capacitors))
 	for k, b := range n.capacitors {
 		for _, e := range n.ends {
@@ -88,4 +87,4 @@ func (t Topology) FirstCoupling(stages int) []bool {
 
 // Charge is the charge that one diode passes per period in units of the
 // load's: 1, or ½ where two sides share it.
-func (t Topology) Charge() float64 { return forms[t].build(1).share }
+func (t Topology) Charge() float64 { return netlistOf(t, 1).share }

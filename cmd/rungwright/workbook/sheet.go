@@ -72,12 +72,6 @@ func (s *sheet) row(cells ...cell) int {
 	return len(s.rows)
 }
 
-// tall appends a row of a height in points.
-func (s *sheet) tall(height float64, cells ...cell) int {
-	s.rows = append(s.rows, sheetRow{cells, height})
-	return len(s.rows)
-}
-
 // spread writes one text across columns: it wraps within them.
 func (s *sheet) spread(st style, textual string, columns int) int {
 	cells := make([]cell, columns)
