@@ -49,6 +49,9 @@ func smallSupply(t *testing.T, r *rand.Rand) Supply {
 // that the search finds the same least cost, or nothing where nothing passes.
 func TestBruteForce(t *testing.T) {
 	trials := 3
+	if testing.Short() {
+		trials = 1
+	}
 	if os.Getenv("RUNGWRIGHT_HEAVY") != "" {
 		trials = 60
 	}
@@ -73,7 +76,7 @@ func TestBruteForce(t *testing.T) {
 		}
 	}
 	t.Logf("%d trials, %d with an answer", trials, found)
-	if found == 0 {
+	if found == 0 && trials > 2 {
 		t.Error("no trial had an answer: they prove nothing")
 	}
 }

@@ -80,6 +80,9 @@ func TestEstimateError(t *testing.T) {
 		if m < 0.8*c.Source.Peak*float64(c.Topology.OutputFactor(c.Stages)) {
 			continue
 		}
+		if most, least := Bound(c, m); m > most*(1+1e-6) || s.RippleV < least*(1-1e-6) {
+			t.Errorf("trial %d: %g V and ripple %g V break the bound, %g V and %g V", i, m, s.RippleV, most, least)
+		}
 		e := Estimate(c)
 		mean = append(mean, math.Abs(e.MeanV/m-1))
 		ripple = append(ripple, math.Abs(e.RippleV/s.RippleV-1))
