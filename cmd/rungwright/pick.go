@@ -96,7 +96,7 @@ func pick(ctx context.Context, s *streams, o *pickOptions) error {
 	if answer.Design == nil {
 		return printWhyNot(s, o, supply, answer, stopped)
 	}
-	saved := files.save(s, answer.Design, parts) // before printing, for the reader of a pipe may leave early
+	saved := files.save(ctx, s, answer.Design, parts) // before printing, for the reader of a pipe may leave early
 	if err := printPicked(s, o, answer, files, saved == nil); err != nil {
 		return err
 	}

@@ -2,6 +2,7 @@ package main
 
 import (
 	"bytes"
+	"context"
 	"os"
 	"path/filepath"
 	"strings"
@@ -93,7 +94,7 @@ func inCatalog(path string, catalogs []string) error {
 }
 
 // save writes the files of a design.
-func (f pickFiles) save(s *streams, d *optimize.Design, parts *catalog.Catalog) error {
+func (f pickFiles) save(ctx context.Context, s *streams, d *optimize.Design, parts *catalog.Catalog) error {
 	var outputs []output
 	if f.design != "" {
 		data, err := d.Encode()
@@ -103,7 +104,7 @@ func (f pickFiles) save(s *streams, d *optimize.Design, parts *catalog.Catalog) 
 		outputs = append(outputs, output{f.design, data})
 	}
 	if f.workbook != "" {
-		data, err := workbook.Write(d, workbook.Options{Suppliers: parts.Suppliers})
+		data, err := workbook.Write(d, workbook.Options{Suppliers: parts.Suppliers, Curves: curves(ctx, d)})
 		if err != nil {
 			return err
 		}

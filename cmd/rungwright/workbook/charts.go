@@ -98,6 +98,9 @@ func (p plot) chart(column, last int) *excelize.Chart {
 	if p.logX {
 		c.XAxis.Title.Paragraph = words(p.xName+logarithmic, 9, false)
 	}
+	if !p.logX { // no tick with a dozen decimals
+		c.XAxis.NumFmt = excelize.ChartNumFmt{CustomNumFmt: "0.###"}
+	}
 	c.XAxis.TickLabelPosition = excelize.ChartTickLabelLow
 	c.XAxis.Minimum = bound(p.curve.X, p.xScale, p.logX)
 	for j := range p.curve.Series {
@@ -106,9 +109,10 @@ func (p plot) chart(column, last int) *excelize.Chart {
 	return c
 }
 
-// bound starts an axis at its first value where that is not zero anyway.
+// bound starts an axis at zero, or below where the values do, so that its ticks
+// fall on round numbers.
 func bound(x []float64, scale float64, log bool) *float64 {
-	least := slices.Min(x) * scale
+	least := min(0, slices.Min(x)*scale)
 	if log {
 		least = 1
 	}
