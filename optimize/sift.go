@@ -171,6 +171,9 @@ func (e *evaluator) sift(c *combination) (upTo int, v verdict) {
 	if c.last() <= ofSecond && c.weak(e, anyDiode, func() bool { return !e.pairMayReach(p) }) {
 		return ofSecond, outOfGuard
 	}
+	if c.last() <= ofSecond && !e.pairMayBear(c, p) {
+		return ofSecond, outOfGuard
+	}
 	if c.last() <= ofDiode {
 		bare := *p
 		bare.Bleeder = Group{}
@@ -332,15 +335,42 @@ func (e *evaluator) mayBear(c *combination, p *Plan, sag float64) bool {
 	if mean*g.meanLeast > e.supply.highest() {
 		return false
 	}
+	if !e.capacitorsBear(c, p, mean) {
+		return false
+	}
+	crest := mean / float64(p.Topology.OutputFactor(p.Stages))
+	d := p.Diodes[0]
+	return ratings.ReverseLimit(e.policy, d.Part) >= 2*crest*g.stressLeast*diodeShare(d.Series)
+}
+
+// pairMayBear is the same for capacitors alone: diodes better than any, less
+// the drop of the worst that the search has.
+func (e *evaluator) pairMayBear(c *combination, p *Plan) bool {
+	bare := *p
+	bare.Bleeder = Group{}
+	circuit := e.circuit(&bare, e.conditions[1])
+	for i := range circuit.Diodes {
+		circuit.Diodes[i] = ladder.Diode{IS: 1e-3, N: 1, RS: 0, CJ0: c.in.worstCJ0, VJ: 0}
+	}
+	mean := ladder.Estimate(circuit).MeanV - c.in.worstDrop*float64(p.Topology.OutputFactor(p.Stages))
+	if e.supply.Output.Discharge.Below > 0 {
+		mean *= 1 - bleederSag
+	}
+	return mean*e.guard().meanLeast <= e.supply.highest() && e.capacitorsBear(c, p, mean)
+}
+
+// capacitorsBear tells whether every capacitor may bear what a mean output
+// implies, the guard allowed for.
+func (e *evaluator) capacitorsBear(c *combination, p *Plan, mean float64) bool {
 	crest := mean / float64(p.Topology.OutputFactor(p.Stages))
 	for i, level := range p.Topology.CapacitorLevels(p.Stages) {
 		k := p.Capacitors[i]
-		if ratings.VoltageLimit(e.policy, k.Part, e.supply.Surroundings.Ambient) < level*crest*max(g.stressLeast, c.in.stress.guard(i))*worstShare(k) {
+		share := max(e.guard().stressLeast, c.in.stress.guard(i))
+		if ratings.VoltageLimit(e.policy, k.Part, e.supply.Surroundings.Ambient) < level*crest*share*worstShare(k) {
 			return false
 		}
 	}
-	d := p.Diodes[0]
-	return ratings.ReverseLimit(e.policy, d.Part) >= 2*crest*g.stressLeast*diodeShare(d.Series)
+	return true
 }
 
 // bleederSag is what a bleeder of a third of the full load, the most that the

@@ -14,20 +14,22 @@ import (
 // region is one topology, stage count and spread of capacitors: a product of
 // option lists, each in the order of weight.
 type region struct {
-	topology ladder.Topology
-	stages   int
-	spread   pattern
-	samePart bool         // one part fills both kinds of the spread, in different numbers
-	lists    [4][]option  // first capacitor group, second one, diodes, bleeders
-	total    int64        // combinations before any were dropped
-	dropped  int64        // because a part cannot bear its place, by its ratings
-	bounded  int64        // because the ladder cannot reach the output with it
-	guarded  int64        // by the estimate with its guard
-	short    [][2]float64 // capacitances with which the ladder cannot reach the output
-	facts    map[[3]int]*facts
-	weak     map[int][]strength // fallen short by the estimate, by diode
-	failed   []strength         // simulated and fallen short
-	stress   *stressSeen        // of the topology and the stages, shared by their regions
+	topology  ladder.Topology
+	stages    int
+	spread    pattern
+	samePart  bool         // one part fills both kinds of the spread, in different numbers
+	lists     [4][]option  // first capacitor group, second one, diodes, bleeders
+	total     int64        // combinations before any were dropped
+	dropped   int64        // because a part cannot bear its place, by its ratings
+	bounded   int64        // because the ladder cannot reach the output with it
+	guarded   int64        // by the estimate with its guard
+	short     [][2]float64 // capacitances with which the ladder cannot reach the output
+	facts     map[[3]int]*facts
+	worstDrop float64            // of the diodes at the full load, more than at the least [V]
+	worstCJ0  float64            // largest junction capacitance of the diodes [F]
+	weak      map[int][]strength // fallen short by the estimate, by diode
+	failed    []strength         // simulated and fallen short
+	stress    *stressSeen        // of the topology and the stages, shared by their regions
 }
 
 // kinds of option in a region's lists.
@@ -219,6 +221,11 @@ func (e *evaluator) guardLists(r *region) {
 		return ratings.ReverseLimit(e.policy, o.group.Part) < 2*crest*diodeShare(o.group.Series)
 	})
 	r.guarded = before - r.size()
+	for _, o := range r.lists[ofDiode] {
+		d := e.diode(o.group, e.supply.Surroundings.Ambient)
+		r.worstDrop = max(r.worstDrop, d.N*d.VT*math.Log1p(e.supply.fullCurrent()/d.IS)+e.supply.fullCurrent()*d.RS)
+		r.worstCJ0 = max(r.worstCJ0, d.CJ0)
+	}
 }
 
 // levels are the highest ideal voltages that the two groups of the spread
