@@ -29,7 +29,7 @@ func proof(c optimize.Certificate) string {
 		rest = "%s are untried"
 	}
 	return fmt.Sprintf("Of %s combinations %s cannot bear their place, %s fall to bounds that no circuit breaks, %s to the estimate "+
-		"with a guard of %.0f %%; %s simulated at every corner; "+rest+".",
+		"with a guard of %.1f %%; %s simulated at every corner; "+rest+".",
 		grouped(c.Combinations), grouped(c.Dominated), grouped(c.Bounded), grouped(c.Estimated), 100*c.Guard,
 		were(c.Simulated), grouped(c.Dearer))
 }
