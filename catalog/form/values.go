@@ -161,3 +161,9 @@ func (m *Map) IsText(key string) bool {
 	_, value := m.lookup(key)
 	return value != nil && value.Kind == yaml.ScalarNode
 }
+
+// IsList tells whether the key holds a list.
+func (m *Map) IsList(key string) bool {
+	_, value := m.lookup(key)
+	return value != nil && value.Kind == yaml.SequenceNode
+}
