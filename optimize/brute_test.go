@@ -53,7 +53,7 @@ func TestBruteForce(t *testing.T) {
 		trials = 1
 	}
 	if os.Getenv("RUNGWRIGHT_HEAVY") != "" {
-		trials = 60
+		trials = 40
 	}
 	found := 0
 	for i := range trials {
