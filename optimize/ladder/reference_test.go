@@ -5,7 +5,9 @@ import (
 	"encoding/json"
 	"math"
 	"os"
+	"os/exec"
 	"testing"
+	"time"
 )
 
 // reference is one circuit solved by SciPy's implicit BDF integrator with
@@ -121,5 +123,29 @@ func near(t *testing.T, what string, got, want, part float64) {
 	t.Helper()
 	if !(math.Abs(got-want) <= part*math.Abs(want)) {
 		t.Errorf("%s: got %.6g want %.6g, off by %.3g %% where %.3g %% is allowed", what, got, want, 100*(got/want-1), 100*part)
+	}
+}
+
+// BenchmarkAgainstSciPy measures in one run how many times faster a steady
+// state is here than in the reference script, on the same circuit; the
+// script's time includes starting Python, about half a second.
+func BenchmarkAgainstSciPy(b *testing.B) {
+	const python, name = "/usr/bin/python3", "hw5-100kHz"
+	began := time.Now()
+	if out, err := exec.Command(python, "../../testdata/reference/steady.py", "--check", "--jobs", "1", name).CombinedOutput(); err != nil {
+		b.Skipf("SKIPPED: the reference script does not run here: %v\n%s", err, out)
+	}
+	theirs := time.Since(began)
+	for _, ref := range references(b) {
+		if ref.Case.Name != name {
+			continue
+		}
+		c := ref.circuit()
+		for b.Loop() {
+			if _, err := Solve(context.Background(), c, nil); err != nil {
+				b.Fatal(err)
+			}
+		}
+		b.ReportMetric(theirs.Seconds()/(b.Elapsed().Seconds()/float64(b.N)), "times_faster")
 	}
 }
