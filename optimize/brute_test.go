@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"math/rand/v2"
 	"os"
+	"strconv"
 	"testing"
 
 	"rungwright/catalog"
@@ -52,8 +53,8 @@ func TestBruteForce(t *testing.T) {
 	if testing.Short() {
 		trials = 1
 	}
-	if os.Getenv("RUNGWRIGHT_HEAVY") != "" {
-		trials = 40
+	if n, err := strconv.Atoi(os.Getenv("RUNGWRIGHT_BRUTE")); err == nil { // minutes for dozens
+		trials = n
 	}
 	found := 0
 	for i := range trials {
